@@ -1,0 +1,3 @@
+//! How an ingredient divides between liquor and solvent.
+
+pub mod distribution;

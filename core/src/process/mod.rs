@@ -1,0 +1,7 @@
+//! One file per step of the flow.
+
+pub mod concentrate;
+pub mod counter_current;
+pub mod isolate;
+pub mod make_up;
+pub mod portions;
