@@ -8,7 +8,7 @@ use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::plan::{IngredientRow, Inverse, Level, StateShare};
 use crate::process::concentrate::{self, Liquor};
 use crate::process::make_up::{self, LossRow, MadeUp, MakeUpPlan};
-use crate::process::portions::{self, PortionIn, StagesIn, StagesOut, removed, solve_rising};
+use crate::process::portions::{self, PortionIn, StageRow, StagesIn, StagesOut, removed, solve_rising};
 use crate::process::{counter_current, isolate};
 use crate::solution::dose::{self, Buffer, Dose};
 use crate::solution::ionisation::{Constant, constants_in_use, speciate};
@@ -16,6 +16,11 @@ use crate::study::{Amount, ConcentrateTo, LossPlace, Problem, Scheme, SiteKind, 
 
 /// Slices in which continuous extraction is shown.
 const CONTINUOUS_SLICES: usize = 10;
+
+/// Most portions looked for when asked how many the goal takes.
+const MOST_PORTIONS: usize = 200;
+/// Largest portion looked for when asked how much the goal takes [mL].
+const LARGEST_PORTION_ML: f64 = 1e6;
 
 /// Everything one pass computes.
 pub(crate) struct Chain {
@@ -192,28 +197,33 @@ impl Chain {
     pub fn inverse(&self, study: &Study) -> Inverse {
         let goal = study.goal.removal_fraction.value;
         let d = self.rows[self.target].d;
-        let e = study.extraction.stage_efficiency.value;
         let total = solvent_total(study);
         let n = match &study.extraction.scheme {
-            Scheme::CrossCurrent { portions } => portions.len() as u32,
-            Scheme::CounterCurrent { stages, .. } => *stages,
+            Scheme::CrossCurrent { portions } => portions.len(),
+            Scheme::CounterCurrent { stages, .. } => *stages as usize,
             Scheme::Continuous { .. } => 1,
         }
         .max(1);
-        let portion_ml = total / f64::from(n);
-        let needed = portions::portions_for(goal, d, portion_ml, self.charged_ml, e)
-            // Rounding up must not add a portion for the last digit.
-            .map(|x| (x - 1e-9).ceil().max(0.0))
-            .filter(|x| *x <= 10_000.0)
-            .map(|x| x as u32);
-        let single_portion_ml = portions::volume_for(goal, 1, d, self.charged_ml, e);
-        let total_in_equal_portions_ml = portions::volume_for(goal, n, d, self.charged_ml, e).map(|v| v * f64::from(n));
+        let portion_ml = total / n as f64;
+        let portions_needed = self
+            .in_equal_portions(study, MOST_PORTIONS, portion_ml)
+            .iter()
+            // The last digit must not cost a portion.
+            .position(|r| r.removed_fraction[0] >= goal - 1e-12)
+            .map(|i| i as u32 + 1);
+        let volume_for = |n: usize| {
+            solve_rising(1e-3, LARGEST_PORTION_ML, goal, &|v| {
+                self.in_equal_portions(study, n, v).last().map_or(0.0, |r| r.removed_fraction[0])
+            })
+        };
+        let single_portion_ml = volume_for(1);
+        let total_in_equal_portions_ml = volume_for(n).map(|v| v * n as f64);
         let counter_current_stages =
             if goal < 1.0 { counter_current::stages_for(1.0 - goal, d * total / self.charged_ml) } else { None };
         let ph_needed = self.ph_needed(study, goal);
         Inverse {
             d,
-            portions_needed: needed,
+            portions_needed,
             portion_ml,
             single_portion_ml,
             total_in_equal_portions_ml,
@@ -221,6 +231,23 @@ impl Chain {
             ph_dose: ph_needed.map(|to| self.dose(study, to)),
             ph_needed,
         }
+    }
+
+    /// The target alone through `n` equal portions of `volume_ml` [mL], with the draining and the
+    /// stage efficiency of the study.
+    fn in_equal_portions(&self, study: &Study, n: usize, volume_ml: f64) -> Vec<StageRow> {
+        let x = &study.extraction;
+        let i = self.target;
+        let feed = StagesIn {
+            liquor_ml: self.charged_ml,
+            liquor_mg: &[self.charged_mg[i]],
+            d: &[self.rows[i].d],
+            entering_mg_per_ml: &[entering(study, i)],
+            left_behind_ml: x.organic_left_behind_ml.value,
+            carried_out_ml: x.aqueous_carried_out_ml.value,
+        };
+        let portion = PortionIn { volume_ml, efficiency: x.stage_efficiency.value };
+        portions::cross_current(&feed, &vec![portion; n]).rows
     }
 
     /// pH nearest to the liquor's own at which the scheme reaches `goal`; none if it does already

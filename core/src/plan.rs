@@ -14,7 +14,7 @@ use crate::process::make_up::MakeUpPlan;
 use crate::process::portions::StageRow;
 use crate::solution::dose::Dose;
 use crate::solution::ionisation::{Constant, constants_in_use, constants_of, speciate};
-use crate::study::{Problem, Study, check};
+use crate::study::{Problem, Study, check, words_of};
 use serde::Serialize;
 
 /// A number with its interval: about 95 % (coverage factor 2), held within what is possible.
@@ -176,6 +176,8 @@ impl Verdict {
 pub struct Contribution {
     /// Path of the input in the file.
     pub at: String,
+    /// What it is, in words.
+    pub what: String,
     /// Its standard uncertainty, in its own unit.
     pub standard_uncertainty: f64,
     /// Its share of the variance of the planned removal, 0 to 1.
@@ -289,7 +291,9 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
     let inverse = chain.inverse(study);
     let isolate = isolate_result(study, &chain, &spread, &headline);
     let goal = study.goal.removal_fraction.value;
+    let contributions = contributions(study, &spread);
     let answer = explain::answer(&explain::Facts {
+        contributions: &contributions,
         goal,
         planned: &headline.removal_fraction,
         target: &chain.rows[chain.target],
@@ -311,7 +315,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         isolate,
         make_up: chain.make_up(study),
         balance: chain.balance.clone(),
-        contributions: contributions(&spread),
+        contributions,
         headline,
     };
     Ok(Outcome { value: plan, notices })
@@ -367,7 +371,7 @@ fn isolate_result(study: &Study, chain: &Chain, spread: &Propagated, headline: &
     })
 }
 
-fn contributions(spread: &Propagated) -> Vec<Contribution> {
+fn contributions(study: &Study, spread: &Propagated) -> Vec<Contribution> {
     let variance = spread.u[REMOVAL] * spread.u[REMOVAL];
     if !(variance > 0.0) {
         return Vec::new();
@@ -377,6 +381,7 @@ fn contributions(spread: &Propagated) -> Vec<Contribution> {
         .iter()
         .map(|c| Contribution {
             at: c.at.clone(),
+            what: words_of(study, &c.at),
             standard_uncertainty: c.u,
             share_of_variance: c.effect[REMOVAL] * c.effect[REMOVAL] / variance,
         })

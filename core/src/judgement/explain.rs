@@ -2,7 +2,7 @@
 
 use crate::chain::percent;
 use crate::judgement::readings::ReadingsReport;
-use crate::plan::{Answer, IngredientRow, Interval, Inverse, Verdict};
+use crate::plan::{Answer, Contribution, IngredientRow, Interval, Inverse, Verdict};
 use crate::process::isolate::IsolateResult;
 
 /// What the answer rests on.
@@ -14,6 +14,7 @@ pub(crate) struct Facts<'a> {
     pub readings: Option<&'a ReadingsReport>,
     pub inverse: &'a Inverse,
     pub isolate: Option<&'a IsolateResult>,
+    pub contributions: &'a [Contribution],
 }
 
 /// Share of the target in a charged form above which ionisation is named as the limit.
@@ -65,6 +66,13 @@ fn way_out(f: &Facts) -> String {
     let charged = f.target.fraction_neutral < 1.0 - MOSTLY_CHARGED;
     let inv = f.inverse;
     let mut parts = Vec::new();
+    if let (Verdict::Borderline, Some(first)) = (Verdict::of(f.planned, f.goal), f.contributions.first()) {
+        parts.push(format!(
+            "{} of the doubt comes from {}: know that better first.",
+            percent(first.share_of_variance),
+            first.what
+        ));
+    }
     if charged {
         parts.push(format!(
             "Ionisation is the limit: at pH {} only {} is neutral.",
@@ -75,10 +83,10 @@ fn way_out(f: &Facts) -> String {
             (Some(ph), Some(dose)) => {
                 let what = if dose.base_mmol >= 0.0 { "base" } else { "acid" };
                 parts.push(format!(
-                    "These portions would reach the goal at pH {ph:.1}, but the {what} for that (about {:.2} mmol) leaves \
-                     {:.0} mg of {} in the liquor, and nothing may be added that stays behind.",
-                    dose.base_mmol.abs(),
-                    dose.left_behind_mg,
+                    "These portions would reach the goal at pH {ph:.1}, but the {what} for that (about {} mmol) leaves \
+                     {} mg of {} in the liquor, and nothing may be added that stays behind.",
+                    significant(dose.base_mmol.abs()),
+                    significant(dose.left_behind_mg),
                     dose.left_behind
                 ));
             }
@@ -86,12 +94,12 @@ fn way_out(f: &Facts) -> String {
         }
     }
     match inv.portions_needed {
-        Some(n) if !charged || n <= 20 => {
+        Some(n) if n <= 20 => {
             parts.push(format!("At this pH it would take {n} portions of {:.0} mL.", inv.portion_ml));
         }
         _ if !charged => {
             parts.push(format!(
-                "With D {} and this stage efficiency no sensible number of portions is enough; choose a solvent with a larger K.",
+                "With D {} and this stage efficiency no sensible number of such portions is enough; choose a solvent with a larger K.",
                 significant(inv.d)
             ));
         }
@@ -156,7 +164,8 @@ fn significant(x: f64) -> String {
     let magnitude = crate::math::log10(x.abs()).floor() as i32;
     if (-4..5).contains(&magnitude) {
         let places = (1 - magnitude).max(0) as usize;
-        format!("{x:.places$}")
+        let unit = crate::math::exp10(f64::from((magnitude - 1).max(0)));
+        format!("{:.places$}", (x / unit).round() * unit)
     } else {
         format!("{x:.1e}")
     }

@@ -52,10 +52,10 @@ pub fn stages_for(left: f64, e: f64) -> Option<f64> {
 /// Counter-current extraction stage by stage, with stage efficiency and loaded solvent.
 ///
 /// In each stage `x₋ − x = E·(x₋ − y/D)` (`x₋`, `x` [mg/mL] liquor in and out, `y` extract out)
-/// and `V_a(x₋ − x) = S(y − y₊)`. Measured from the pinch `c_in/D` both are homogeneous, so the
-/// march from the raffinate end, with `u = x − c_in/D`, `w = y₊/D − c_in/D`, needs no iteration:
-/// `u₋ − u = E(u − w)/[(1 − E) + E/e]`, `e = D·S/V_a`. It is rescaled at each stage, so no number
-/// of stages overflows.
+/// and `V_a(x₋ − x) = S(y − y₊)` (`y₊` extract in). Both are linear, so what the feed brings and
+/// what the solvent brings are marched separately and added, each from the end where the other is
+/// nothing; no iteration, no difference of large numbers, and each stage is rescaled, so no number
+/// of stages overflows. With `D = 0` all that the solvent brings stays in the liquor.
 /// Valid: D constant, phases immiscible, steady running, clean parting.
 /// Reference: closed form [`fraction_left`] at E = 1.
 pub fn counter_current(feed: &StagesIn, solvent_ml: f64, stages: usize, efficiency: f64) -> StagesOut {
@@ -65,33 +65,12 @@ pub fn counter_current(feed: &StagesIn, solvent_ml: f64, stages: usize, efficien
     let mut extract: Vec<Vec<f64>> = vec![vec![0.0; n]; stages];
     let entered: Vec<f64> = feed.entering_mg_per_ml.iter().map(|c| c * solvent_ml).collect();
     for i in 0..n {
-        let d = feed.d[i];
-        let x0 = feed.liquor_mg[i] / v_a;
-        if !(d > 0.0) {
-            for s in 0..stages {
-                liquor[s][i] = feed.liquor_mg[i];
-                extract[s][i] = entered[i];
-            }
-            continue;
-        }
-        let e = d * solvent_ml / v_a;
-        let pinch = feed.entering_mg_per_ml[i] / d;
-        // March from the raffinate end with the outgoing liquor one unit above the pinch; `shape`
-        // holds each stage's outgoing (liquor, extract) relative to its incoming liquor.
-        let (mut u, mut w) = (1.0, 0.0);
-        let mut shape = vec![(0.0, 0.0); stages];
-        for s in (0..stages).rev() {
-            let rise = efficiency * (u - w) / ((1.0 - efficiency) + efficiency / e);
-            let (u_in, y) = (u + rise, w + rise / e);
-            shape[s] = (u / u_in, y / u_in);
-            (u, w) = (1.0, y / u_in);
-        }
-        let mut above = x0 - pinch;
+        let e = feed.d[i] * solvent_ml / v_a;
+        let from_feed = feed_response(e, stages, efficiency);
+        let from_load = load_response(e, stages, efficiency);
         for s in 0..stages {
-            let (out, y) = shape[s];
-            extract[s][i] = (pinch + above * y) * d * solvent_ml;
-            above *= out;
-            liquor[s][i] = (pinch + above) * v_a;
+            liquor[s][i] = feed.liquor_mg[i] * from_feed[s].0 + entered[i] * from_load[s].0;
+            extract[s][i] = feed.liquor_mg[i] * from_feed[s].1 + entered[i] * from_load[s].1;
         }
     }
     let rows = (0..stages)
@@ -109,6 +88,53 @@ pub fn counter_current(feed: &StagesIn, solvent_ml: f64, stages: usize, efficien
         .collect();
     let raffinate_mg = liquor.last().cloned().unwrap_or_else(|| feed.liquor_mg.to_vec());
     StagesOut { rows, liquor_ml: v_a, left_behind_ml: 0.0, raffinate_mg, entered_mg: entered }
+}
+
+/// Liquor and extract leaving each stage, as fractions of what the feed brings, clean solvent.
+///
+/// March from the raffinate end: with `a` leaving in the liquor and `b` arriving in the extract
+/// (both amounts), `a₋ − a = E(a − b/e)/[(1 − E) + E/e]`, written here times `e`.
+fn feed_response(e: f64, stages: usize, efficiency: f64) -> Vec<(f64, f64)> {
+    let mut shape = vec![(1.0, 0.0); stages];
+    let mut arriving = 0.0;
+    for s in (0..stages).rev() {
+        let moved = efficiency * (e - arriving).max(0.0) / (e * (1.0 - efficiency) + efficiency);
+        let coming = 1.0 + moved;
+        // Relative to the liquor that comes in, which is what the stage above sends down.
+        shape[s] = (1.0 / coming, (arriving + moved) / coming);
+        arriving = (arriving + moved) / coming;
+    }
+    let mut brought = 1.0;
+    for stage in &mut shape {
+        let (down, up) = *stage;
+        *stage = (brought * down, brought * up);
+        brought *= down;
+    }
+    shape
+}
+
+/// Liquor and extract leaving each stage, as fractions of what the entering solvent brings, clean
+/// liquor.
+///
+/// March from the feed end, `ρ` being what arrives in the liquor over what leaves in the extract:
+/// `a' = (1 − E)a + E·b/e` leaves in the liquor and `b₊ = b + a' − a` came in the extract, so
+/// `b/b₊ = e/[e + E(1 − eρ)]` and `a'/b₊ = [(1 − E)eρ + E]/[e + E(1 − eρ)]`.
+fn load_response(e: f64, stages: usize, efficiency: f64) -> Vec<(f64, f64)> {
+    let mut shape = vec![(0.0, 0.0); stages];
+    let mut rho = 0.0;
+    for stage in &mut shape {
+        let below = e + efficiency * (1.0 - e * rho).max(0.0);
+        let liquor = ((1.0 - efficiency) * e * rho + efficiency) / below;
+        *stage = (liquor, e / below);
+        rho = liquor;
+    }
+    let mut arriving = 1.0;
+    for stage in shape.iter_mut().rev() {
+        let (liquor, extract) = *stage;
+        *stage = (arriving * liquor, arriving * extract);
+        arriving *= extract;
+    }
+    shape
 }
 
 #[cfg(test)]

@@ -144,9 +144,8 @@ pub fn cross_current(feed: &StagesIn, portions: &[PortionIn]) -> StagesOut {
 /// Continuous extraction: `solvent_ml` passed steadily through the standing liquor, shown in
 /// `slices` equal parts.
 ///
-/// `n(V) = n∞ + (n₀ − n∞)·exp(−E·D·V/V_a)`, `n∞ = c_in·V_a/D`; `V` [mL] solvent passed, `c_in`
-/// [mg/mL] its load, `E` [-] how nearly the leaving solvent is at equilibrium. With `D = 0`
-/// nothing moves.
+/// `n = n₀·e^−t + E·c_in·V·(1 − e^−t)/t`, `t = E·D·V/V_a`; `V` [mL] solvent passed, `c_in` [mg/mL]
+/// its load, `E` [-] how nearly the leaving solvent is at equilibrium.
 /// Valid: liquor well mixed, solvent hold-up small against the liquor, clean parting.
 /// Reference: limit of many small portions (C. J. Geankoplis, Transport Processes and Unit
 /// Operations 3rd ed., ch. 12); for `c_in = 0`, `n/n₀ = exp(−D·V/V_a)`.
@@ -163,10 +162,9 @@ pub fn continuous(feed: &StagesIn, solvent_ml: f64, efficiency: f64, slices: usi
             let brought = feed.entering_mg_per_ml[i] * step;
             let d = feed.d[i];
             let before = aq[i];
-            if d > 0.0 {
-                let limit = feed.entering_mg_per_ml[i] * feed.liquor_ml / d;
-                aq[i] = limit + (before - limit) * math::exp(-efficiency * d * step / feed.liquor_ml);
-            }
+            let t = efficiency * d * step / feed.liquor_ml;
+            let gain = if t < 1e-8 { 1.0 - 0.5 * t } else { (1.0 - math::exp(-t)) / t };
+            aq[i] = before * math::exp(-t) + efficiency * brought * gain;
             entered[i] += brought;
             extract_mg.push(before + brought - aq[i]);
             removed_fraction.push(removed(feed.liquor_mg[i], aq[i], feed.liquor_ml, feed.liquor_ml));

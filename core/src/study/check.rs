@@ -122,6 +122,34 @@ fn allowed(path: &str) -> Allowed {
     }
 }
 
+/// What the number at `path` is, in words, e.g. "the partition coefficient of caffeine".
+pub fn words_of(study: &Study, path: &str) -> String {
+    let what = allowed(path).what;
+    let index =
+        |head: &str| -> Option<usize> { path.strip_prefix(head)?.split_once(']').and_then(|(i, _)| i.parse().ok()) };
+    if let Some(i) = index("feed.ingredients[") {
+        if let Some(ing) = study.feed.ingredients.get(i) {
+            return format!("{what} of {}", ing.name);
+        }
+    }
+    if let Some(p) = index("partition[").and_then(|i| study.partition.get(i)) {
+        return format!("{what} of {}", p.ingredient);
+    }
+    if let Some(i) = index("extraction.portions[") {
+        return format!("{what} {}", i + 1);
+    }
+    if let Some(l) = index("losses[").and_then(|i| study.losses.get(i)) {
+        return format!("{what} as “{}”", l.what);
+    }
+    match path {
+        "feed.volume_ml" => "the volume of the feed".to_owned(),
+        "concentrate.to.volume_ml" => "the volume of the liquor".to_owned(),
+        "concentrate.ph_after" => "the pH of the liquor".to_owned(),
+        "feed.ph" => "the pH of the feed".to_owned(),
+        _ => what.to_owned(),
+    }
+}
+
 /// The range, value and advice as a sentence.
 fn refusal(a: &Allowed, value: f64) -> String {
     let unit = if a.unit.is_empty() { String::new() } else { format!(" {}", a.unit) };

@@ -13,7 +13,7 @@ mod read;
 mod visit;
 
 pub use bench::{Isolate, Loss, LossAmount, LossPlace, MakeUp};
-pub use check::{Problem, check};
+pub use check::{Problem, check, words_of};
 pub use extraction::{EnteringSolvent, Extraction, PartitionEntry, Portion, Scheme, SolventChoice};
 pub use feed::{Amount, Concentrate, ConcentrateTo, Disputed, Feed, Ingredient, MeantAs, Reading, Site, SiteKind};
 pub use quantity::{Quantity, Range};
