@@ -628,7 +628,7 @@ fn ledger(
 pub(crate) fn percent(fraction: f64) -> String {
     let p = 100.0 * fraction;
     let a = p.abs();
-    if a >= 99.95 && a < 100.0 {
+    if (99.95..100.0).contains(&a) {
         "more than 99.9 %".to_owned()
     } else if a >= 99.0 {
         format!("{p:.1} %")

@@ -127,10 +127,8 @@ pub fn words_of(study: &Study, path: &str) -> String {
     let what = allowed(path).what;
     let index =
         |head: &str| -> Option<usize> { path.strip_prefix(head)?.split_once(']').and_then(|(i, _)| i.parse().ok()) };
-    if let Some(i) = index("feed.ingredients[") {
-        if let Some(ing) = study.feed.ingredients.get(i) {
-            return format!("{what} of {}", ing.name);
-        }
+    if let Some(ing) = index("feed.ingredients[").and_then(|i| study.feed.ingredients.get(i)) {
+        return format!("{what} of {}", ing.name);
     }
     if let Some(p) = index("partition[").and_then(|i| study.partition.get(i)) {
         return format!("{what} of {}", p.ingredient);
@@ -167,10 +165,8 @@ fn each_number(study: &Study, say: &mut dyn FnMut(&str, String)) {
             say(path, refusal(&a, q.value));
             return;
         }
-        if let Some(u) = q.standard_uncertainty {
-            if !u.is_finite() || u < 0.0 {
-                say(path, format!("the standard uncertainty of {} is {u}; it can be 0 or more", a.what));
-            }
+        if let Some(u) = q.standard_uncertainty.filter(|u| !u.is_finite() || *u < 0.0) {
+            say(path, format!("the standard uncertainty of {} is {u}; it can be 0 or more", a.what));
         }
         if let Some(r) = q.range {
             if !(r.low <= q.value && q.value <= r.high && r.low.is_finite() && r.high.is_finite()) {
