@@ -133,6 +133,8 @@ pub struct Inverse {
 pub struct Answer {
     /// A sentence a manager could read.
     pub sentence: String,
+    /// What the limit is and what would have to change, or plan beside isolate; may be empty.
+    pub detail: String,
     /// Whether the plan reaches the goal.
     pub verdict: Verdict,
 }

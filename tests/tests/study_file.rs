@@ -77,7 +77,7 @@ fn the_json_opens_with_the_headline() {
 fn a_charged_base_is_told_the_ph_it_needs_and_its_price() {
     let v = solved("charged-base");
     assert_eq!(v.pointer("/answer/verdict"), Some(&json!("falls_short")));
-    let sentence = v.pointer("/answer/sentence").and_then(Value::as_str).expect("a sentence");
+    let sentence = v.pointer("/answer/detail").and_then(Value::as_str).expect("a sentence");
     assert!(sentence.contains("Ionisation is the limit") && sentence.contains("sodium"), "{sentence}");
     let ph = v.pointer("/inverse/ph_needed").and_then(Value::as_f64).expect("a pH");
     // Put back as the liquor's pH, the plan reaches the goal, and just below it does not.

@@ -22,7 +22,7 @@ const HELP: &str = "cargo xtask COMMAND
   build                 dist/unstir.html (one file) and dist/site/ (for any static server)
   solve STUDY.json      the plan of a study file as JSON
   bench                 how long a plan takes
-  schema                write the JSON Schema of the study file
+  schema [--check]      write the JSON Schema of the study file, or only say whether it is current
   serve                 live reload while working on the page";
 
 fn main() -> ExitCode {
@@ -36,6 +36,7 @@ fn main() -> ExitCode {
         ["solve", file] => solve::print(Path::new(file)),
         ["bench"] => bench::print(),
         ["schema"] => solve::write_schema(),
+        ["schema", "--check"] => solve::check_schema(),
         ["serve"] => site::serve(),
         [] | ["help" | "--help" | "-h"] => {
             println!("{HELP}");
@@ -65,5 +66,5 @@ fn dist() -> PathBuf {
 
 /// Where cargo builds.
 fn target() -> PathBuf {
-    std::env::var_os("CARGO_TARGET_DIR").map_or_else(|| root().join("target"), PathBuf::from)
+    root().join(std::env::var_os("CARGO_TARGET_DIR").unwrap_or_else(|| "target".into()))
 }

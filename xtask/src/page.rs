@@ -5,8 +5,8 @@ use crate::{Result, dist, root, say, target};
 use base64::Engine;
 use base64::engine::general_purpose::STANDARD;
 use std::path::{Path, PathBuf};
-use std::process::Command;
-use std::time::Instant;
+use std::process::{Command, Stdio};
+use std::time::{Duration, Instant};
 use wasm_bindgen_cli_support::Bindgen;
 
 /// Builds the one file and opens it.
@@ -27,9 +27,8 @@ pub fn build() -> Result {
     tools::wasm_target()?;
     let wasm_opt = tools::wasm_opt_or_notice();
     say::step("Building the page (about 2 minutes the first time)");
-    run(tools::cargo().args([
+    run(tools::cargo().args(tools::quiet()).args([
         "build",
-        "--quiet",
         "--release",
         "--locked",
         "--package",
@@ -84,7 +83,8 @@ fn optimise(wasm: &Path, wasm_opt: Option<&Path>) -> Result<PathBuf> {
 
 /// Puts shell, styles, icon, script and wasm into `dist/unstir.html`.
 fn pack(wasm: &Path, script: &Path) -> Result<PathBuf> {
-    let read = |path: &Path| std::fs::read_to_string(path).map_err(|e| format!("{} could not be read: {e}.", path.display()));
+    let read =
+        |path: &Path| std::fs::read_to_string(path).map_err(|e| format!("{} could not be read: {e}.", path.display()));
     let public = root().join("public");
     let shell = read(&public.join("index.html"))?;
     let style = read(&public.join("style.css"))?;
@@ -133,8 +133,26 @@ fn show(page: &Path) -> bool {
         ("open", &[])
     } else if cfg!(windows) {
         ("cmd", &["/C", "start", ""])
-    } else {
+    } else if ["DISPLAY", "WAYLAND_DISPLAY"].iter().any(|screen| std::env::var_os(screen).is_some()) {
         ("xdg-open", &[])
+    } else {
+        return false;
     };
-    tools::output_of(Command::new(program).args(args).arg(page)).is_some()
+    let silent = Command::new(program)
+        .args(args)
+        .arg(page)
+        .stdin(Stdio::null())
+        .stdout(Stdio::null())
+        .stderr(Stdio::null())
+        .spawn();
+    let Ok(mut opener) = silent else { return false };
+    // Some openers stay as long as the browser does: one that still runs has found it.
+    for _ in 0..30 {
+        match opener.try_wait() {
+            Ok(Some(status)) => return status.success(),
+            Ok(None) => std::thread::sleep(Duration::from_millis(100)),
+            Err(_) => return false,
+        }
+    }
+    true
 }

@@ -2,6 +2,7 @@
 
 use crate::tools::{self, run};
 use crate::{Result, dist, root, say, target};
+use std::path::PathBuf;
 use std::process::Command;
 use std::time::Instant;
 
@@ -14,32 +15,42 @@ fn trunk() -> Result<Command> {
     c.current_dir(root()).env("PATH", tools::path_with_tools()).env("CARGO_TARGET_DIR", target());
     // trunk 0.21 takes NO_COLOR for an option of its own and stops.
     c.env_remove("NO_COLOR");
-    if tools::wasm_opt().is_none() {
-        c.env("TRUNK_SKIP_WASM_OPT", "1");
-    }
     Ok(c)
 }
 
-/// The shell trunk builds: without the wish for wasm-opt where that is missing.
-fn shell() -> Result<&'static str> {
-    const FULL: &str = "public/index.html";
-    const PLAIN: &str = "public/.index-plain.html";
-    if tools::wasm_opt_or_notice().is_some() {
-        return Ok(FULL);
+/// A copy of the shell that does not ask for wasm-opt, beside the shell so that its links hold;
+/// taken away again when it is dropped.
+struct PlainShell(PathBuf);
+
+impl PlainShell {
+    fn write() -> Result<Self> {
+        let public = root().join("public");
+        let shell = std::fs::read_to_string(public.join("index.html"))
+            .map_err(|e| format!("public/index.html could not be read: {e}."))?;
+        let plain = Self(public.join(".index-plain.html"));
+        std::fs::write(&plain.0, shell.replace("data-wasm-opt=\"z\"", "data-wasm-opt=\"0\""))
+            .map_err(|e| format!("{} could not be written: {e}.", plain.0.display()))?;
+        Ok(plain)
     }
-    let text = std::fs::read_to_string(root().join(FULL)).map_err(|e| format!("{FULL} could not be read: {e}."))?;
-    std::fs::write(root().join(PLAIN), text.replace("data-wasm-opt=\"z\"", "data-wasm-opt=\"0\""))
-        .map_err(|e| format!("{PLAIN} could not be written: {e}."))?;
-    Ok(PLAIN)
+}
+
+impl Drop for PlainShell {
+    fn drop(&mut self) {
+        let _ = std::fs::remove_file(&self.0);
+    }
 }
 
 /// Builds `dist/site/`.
 pub fn build() -> Result {
     let start = Instant::now();
-    let shell = shell()?;
     let mut c = trunk()?;
-    say::step("Building the hosted site (about a minute)");
-    run(c.args(["build", "--release", "--log", "warn", shell]))?;
+    c.args(["build", "--release", "--log", "warn"]);
+    let plain = if tools::wasm_opt_or_notice().is_none() { Some(PlainShell::write()?) } else { None };
+    if let Some(shell) = &plain {
+        c.arg(&shell.0);
+    }
+    say::step("Building the hosted site (seconds after the page, about 2 minutes without it)");
+    run(&mut c)?;
     let folder = dist().join("site");
     let wasm = std::fs::read_dir(&folder)
         .into_iter()
@@ -57,8 +68,7 @@ pub fn build() -> Result {
 
 /// Serves the page and reloads it at every change.
 pub fn serve() -> Result {
-    let shell = shell()?;
     let mut c = trunk()?;
-    say::step("Serving; stop with Ctrl-C");
-    run(c.args(["serve", "--open", shell]))
+    say::step("Building (about 2 minutes the first time) and serving; stop with Ctrl-C");
+    run(c.args(["serve", "--open"]))
 }

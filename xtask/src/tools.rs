@@ -1,8 +1,10 @@
 //! Finding the tools a command needs, and installing what is missing.
 
 use crate::{Result, say};
+use std::io::IsTerminal;
 use std::path::{Path, PathBuf};
 use std::process::{Command, Stdio};
+use std::sync::OnceLock;
 use std::time::Instant;
 
 /// Version of trunk, which builds the hosted site.
@@ -27,12 +29,17 @@ pub fn output_of(command: &mut Command) -> Option<String> {
 /// cargo, as it runs us.
 pub fn cargo() -> Command {
     let mut c = Command::new(std::env::var_os("CARGO").unwrap_or_else(|| "cargo".into()));
-    c.current_dir(crate::root());
+    c.current_dir(crate::root()).env("CARGO_TARGET_DIR", crate::target());
     // Set for xtask itself, not for what it builds.
     for name in ["CARGO_MANIFEST_DIR", "CARGO_MANIFEST_PATH", "CARGO_PKG_NAME", "NO_COLOR"] {
         c.env_remove(name);
     }
     c
+}
+
+/// Silence for cargo where nobody watches; on a terminal its progress bar stays.
+pub fn quiet() -> &'static [&'static str] {
+    if std::io::stderr().is_terminal() { &[] } else { &["--quiet"] }
 }
 
 /// Adds the wasm target to the toolchain if it is not there.
@@ -53,7 +60,11 @@ fn cache() -> PathBuf {
         .iter()
         .find_map(std::env::var_os)
         .map(PathBuf::from)
-        .or_else(|| std::env::var_os("HOME").or_else(|| std::env::var_os("USERPROFILE")).map(|h| PathBuf::from(h).join(".cache")))
+        .or_else(|| {
+            std::env::var_os("HOME")
+                .or_else(|| std::env::var_os("USERPROFILE"))
+                .map(|h| PathBuf::from(h).join(".cache"))
+        })
         .unwrap_or_else(crate::target);
     base.join("unstir-tools")
 }
@@ -77,9 +88,9 @@ fn installed(name: &str, krate: &str, version: &str, about: &str, more: &[&str])
     let mut c = cargo();
     // Outside the workspace: its configuration and lock file do not concern the tool.
     c.current_dir(std::env::temp_dir()).env_remove("CARGO_TARGET_DIR");
-    c.args(["install", "--quiet", "--locked", krate, "--version", version, "--root"]).arg(cache()).args(more);
+    c.args(quiet()).args(["install", "--locked", krate, "--version", version, "--root"]).arg(cache()).args(more);
     run(&mut c)?;
-    say::done(&format!("{krate} {version} installed in {}", say::since(start)));
+    say::done(&format!("{krate} {version} installed in {}.", say::since(start)));
     found(name, version).ok_or_else(|| format!("{name} {version} was installed but does not run."))
 }
 
@@ -102,7 +113,7 @@ pub fn path_with_tools() -> std::ffi::OsString {
 }
 
 /// wasm-opt, if the system has it.
-pub fn wasm_opt() -> Option<PathBuf> {
+fn wasm_opt() -> Option<PathBuf> {
     output_of(Command::new("wasm-opt").arg("--version")).map(|_| PathBuf::from("wasm-opt"))
 }
 
@@ -120,7 +131,7 @@ pub const WASM_OPT_FEATURES: [&str; 6] = [
 /// was done.
 fn system_packages(packages: &[&str]) -> bool {
     let root = output_of(Command::new("id").arg("-u")).is_some_and(|u| u.trim() == "0");
-    let debian = Path::new("/etc/debian_version").exists();
+    let debian = output_of(Command::new("apt-get").arg("--version")).is_some();
     if !(root && debian) {
         return false;
     }
@@ -132,16 +143,20 @@ fn system_packages(packages: &[&str]) -> bool {
         && apt(&[&["install", "-y", "-qq", "--no-install-recommends"][..], packages].concat()).is_ok()
 }
 
-/// wasm-opt, installed where that is ours to do; a notice where it is missing.
+/// wasm-opt, installed where that is ours to do; one notice where it is missing.
 pub fn wasm_opt_or_notice() -> Option<PathBuf> {
-    if wasm_opt().is_none() {
-        system_packages(&["binaryen"]);
-    }
-    let tool = wasm_opt();
-    if tool.is_none() {
-        say::done("wasm-opt was not found: the page is built without it and is larger. Install the package “binaryen” for the small one.");
-    }
-    tool
+    static TOOL: OnceLock<Option<PathBuf>> = OnceLock::new();
+    TOOL.get_or_init(|| {
+        let tool = wasm_opt().or_else(|| if system_packages(&["binaryen"]) { wasm_opt() } else { None });
+        if tool.is_none() {
+            say::done(
+                "wasm-opt was not found: the page is built without it and is larger. \
+                 Install the package “binaryen” for the small one.",
+            );
+        }
+        tool
+    })
+    .clone()
 }
 
 /// A browser and its driver for the journeys.

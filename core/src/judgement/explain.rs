@@ -32,12 +32,13 @@ pub(crate) fn answer(f: &Facts) -> Answer {
         };
         return Answer {
             sentence: format!(
-                "{} of {name} came out by the isolate ({}), {reached} the goal of {}. {}",
+                "{} of {name} came out ({}), {reached} the goal of {}; the plan expected {}.",
                 about(found.found_removal.value),
                 span(&found.found_removal),
                 percent(f.goal),
-                found.sentence
+                percent(f.planned.value)
             ),
+            detail: found.sentence.clone(),
             verdict,
         };
     }
@@ -54,11 +55,8 @@ pub(crate) fn answer(f: &Facts) -> Answer {
         Some(_) => sentence.push_str(", whatever the reading of its constant."),
         None => sentence.push('.'),
     }
-    if verdict != Verdict::Reaches {
-        sentence.push(' ');
-        sentence.push_str(&way_out(f));
-    }
-    Answer { sentence, verdict }
+    let detail = if verdict == Verdict::Reaches { String::new() } else { way_out(f) };
+    Answer { sentence, detail, verdict }
 }
 
 /// What would have to change for the goal.
@@ -115,7 +113,7 @@ pub(crate) fn plan_against_isolate(
     apparent_e: Option<&Interval>,
     apparent_d: Option<f64>,
 ) -> String {
-    let plan = format!("The plan expected {} ({}).", percent(planned.value), span(planned));
+    let plan = format!("Planned was {} ({}).", percent(planned.value), span(planned));
     if found.low <= planned.high && planned.low <= found.high {
         return format!("{plan} Plan and isolate agree within their uncertainty.");
     }
@@ -162,11 +160,33 @@ fn significant(x: f64) -> String {
         return format!("{x}");
     }
     let magnitude = crate::math::log10(x.abs()).floor() as i32;
-    if (-4..5).contains(&magnitude) {
-        let places = (1 - magnitude).max(0) as usize;
-        let unit = crate::math::exp10(f64::from((magnitude - 1).max(0)));
-        format!("{:.places$}", (x / unit).round() * unit)
-    } else {
-        format!("{x:.1e}")
+    match magnitude {
+        -4..=1 => format!("{x:.0$}", (1 - magnitude) as usize),
+        2..=4 => {
+            let unit = crate::math::exp10(f64::from(magnitude - 1));
+            format!("{:.0}", (x / unit).round() * unit)
+        }
+        _ => format!("{x:.1e}"),
+    }
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn two_figures() {
+        for (x, text) in [
+            (0.106_9, "0.11"),
+            (0.38, "0.38"),
+            (0.001_234, "0.0012"),
+            (9.47, "9.5"),
+            (46.11, "46"),
+            (1060.4, "1100"),
+            (1.234e-6, "1.2e-6"),
+            (0.0, "0"),
+        ] {
+            assert_eq!(significant(x), text);
+        }
     }
 }

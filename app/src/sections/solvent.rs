@@ -1,0 +1,114 @@
+//! Solvent: the choice with its cautions in the row, and the partition coefficients.
+
+use super::bind::{button, hinted, number, of_draft, of_plan, text, words};
+use super::partition::PartitionFields;
+use super::step::{Cautions, Step};
+use crate::parts::CautionBox;
+use crate::state::NumberText;
+use crate::state::work::work;
+use crate::view_model::solvent::{SolventRow, general_cautions_at, solvent_rows};
+use leptos::prelude::*;
+use unstir_core::library::cautions::CautionStep;
+use unstir_core::library::solvents::solvent;
+use unstir_core::process::concentrate::density_g_per_ml;
+
+/// The step.
+#[component]
+pub fn SolventStep() -> impl IntoView {
+    let sum = of_plan(|g| {
+        let target = g.plan.ingredients.iter().find(|i| i.is_target);
+        target.map_or_else(String::new, |t| {
+            let d = crate::view_model::format::significant(t.d, 3);
+            format!("{}: D of {} is {d} at pH {}", g.study.solvent.name, t.name, g.plan.extraction_ph)
+        })
+    });
+    // To two decimals, so that the list is not built anew at each keystroke.
+    let density = of_plan(|g| g.plan.liquor.brix.map(|b| (density_g_per_ml(b) * 100.0).round() / 100.0));
+    view! {
+        <Step id="solvent" name="Solvent" sum=sum>
+            <p class="quiet">
+                "Nothing here says that a solvent may be used for your purpose: local rules and licensed practice decide, and the supplier's safety data sheet prevails over these rows."
+            </p>
+            <Cautions list=Signal::stored(general_cautions_at(&[CautionStep::Any, CautionStep::Solvent]))/>
+            <OwnSolvent/>
+            <PartitionFields/>
+            <h3>"Solvents of the library"</h3>
+            <div class="choices">
+                {move || solvent_rows(density.get()).into_iter().map(|row| view! { <Choice row/> }).collect_view()}
+            </div>
+        </Step>
+    }
+}
+
+/// The solvent in use: its name and density, which may be the user's own.
+#[component]
+fn OwnSolvent() -> impl IntoView {
+    let w = work();
+    let own = of_draft(|d| !d.solvent.id.is_empty() && solvent(&d.solvent.id).is_none());
+    let take_own = move || w.draft.update(|d| d.choose_solvent("own", "own solvent", NumberText::default()));
+    view! {
+        <div class="fields">
+            {text(
+                words("solvent in use", ""),
+                |_| "solvent.name".to_owned(),
+                |d| Some(&d.solvent.name),
+                |d| {
+                    // A name typed before anything was chosen is a solvent of the user's own.
+                    if d.solvent.id.is_empty() {
+                        d.solvent.id = "own".to_owned();
+                    }
+                    Some(&mut d.solvent.name)
+                },
+            )}
+            {number(
+                hinted("density at 20 °C", "g/mL", "may be left empty"),
+                |_| "solvent.density_g_per_ml".to_owned(),
+                |d| Some(&d.solvent.density),
+                |d| Some(&mut d.solvent.density),
+            )}
+            {button("Use a solvent of your own", "quiet", take_own)}
+        </div>
+        <p class="notice" hidden=move || !own.get()>
+            "The library holds nothing about this solvent: find its hazards, limits and layer in its safety data sheet before opening it."
+        </p>
+    }
+}
+
+/// One solvent with everything that speaks for and against it.
+#[component]
+fn Choice(
+    /// The solvent.
+    row: SolventRow,
+) -> impl IntoView {
+    let w = work();
+    let id = row.id.clone();
+    let chosen = of_draft(move |d| d.solvent.id == id);
+    let (id, name, density) = (row.id.clone(), row.name.clone(), row.density.clone());
+    let choose = move || w.draft.update(|d| d.choose_solvent(&id, &name, density.clone()));
+    let facts = row.facts.into_iter().map(|f| {
+        view! {
+            <div class="fact" title=f.source>
+                <dt>{f.what}</dt>
+                <dd>{f.value}</dd>
+            </div>
+        }
+    });
+    let codes = row.codes.into_iter().map(|(code, meaning)| view! { <li><strong>{code}</strong>" "{meaning}</li> });
+    let cautions = row.cautions.into_iter().map(|caution| view! { <CautionBox caution/> });
+    let note = (!row.note.is_empty()).then(|| view! { <p class="quiet">{row.note}</p> });
+    let sources = row.density.source;
+    view! {
+        <div class="row choice" class:chosen=chosen>
+            <div class="row-head">
+                <strong>{row.name}</strong>
+                <span class="role" hidden=move || !chosen.get()>"in use"</span>
+                <span hidden=move || chosen.get()>{button("Use this solvent", "", choose)}</span>
+            </div>
+            <dl class="facts">{facts.collect_view()}</dl>
+            <ul class="codes">{codes.collect_view()}</ul>
+            <div class="cautions">{cautions.collect_view()}</div>
+            {note}
+            <p class="quiet">"density: " {sources}</p>
+        </div>
+    }
+}

@@ -1,0 +1,14 @@
+//! What the user typed, and what follows from it.
+
+pub mod demos;
+pub mod draft;
+pub mod file_text;
+mod edit;
+mod from_study;
+pub mod number_text;
+pub mod shelf;
+mod to_study;
+pub mod work;
+
+pub use draft::Draft;
+pub use number_text::NumberText;

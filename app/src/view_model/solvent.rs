@@ -1,0 +1,270 @@
+//! Solvents as choices: facts, hazard codes with their meaning and cautions, all in the row.
+
+use super::format::{fixed, significant};
+use crate::parts::CautionText;
+use crate::state::NumberText;
+use unstir_core::library::cautions::{Caution, CautionStep, cautions_for, general_cautions, hazard_statement};
+use unstir_core::library::limits::{ExposureLimits, exposure_limits_for};
+use unstir_core::library::partition::{KBasis, published_k};
+use unstir_core::library::solutes::{Solute, solutes};
+use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent, solvents};
+use unstir_core::library::sources::Source;
+
+/// A solvent of the library as a row.
+#[derive(Clone, Debug, PartialEq)]
+pub struct SolventRow {
+    /// Id.
+    pub id: String,
+    /// Name.
+    pub name: String,
+    /// Density with its source, to take over.
+    pub density: NumberText,
+    /// What it is, value and source.
+    pub facts: Vec<Fact>,
+    /// Hazard codes with their meaning.
+    pub codes: Vec<(String, String)>,
+    /// Cautions for choosing and opening it.
+    pub cautions: Vec<CautionText>,
+    /// A remark; often empty.
+    pub note: String,
+}
+
+/// One property of a solvent.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct Fact {
+    /// What it is.
+    pub what: String,
+    /// Value with unit.
+    pub value: String,
+    /// Source, with how far it was checked.
+    pub source: String,
+}
+
+/// Every solvent of the library, its layer told against a liquor of this density [g/mL].
+pub fn solvent_rows(liquor_density: Option<f64>) -> Vec<SolventRow> {
+    solvents().iter().map(|s| solvent_row(s, liquor_density)).collect()
+}
+
+fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRow {
+    let statement = |code: &String| {
+        let meaning = hazard_statement(code).map_or_else(|| "see the safety data sheet".to_owned(), |h| h.meaning);
+        (code.clone(), meaning)
+    };
+    SolventRow {
+        id: s.id.clone(),
+        name: s.name.clone(),
+        density: NumberText {
+            value: s.density_20c_g_ml.to_string(),
+            spread: String::new(),
+            source: cite(&s.density_source),
+        },
+        facts: facts(s, liquor_density),
+        codes: s.h_codes.iter().chain(&s.euh_codes).map(statement).collect(),
+        cautions: at_step(&cautions_for(&s.id), CautionStep::Solvent),
+        note: s.note.clone(),
+    }
+}
+
+fn facts(s: &Solvent, liquor_density: Option<f64>) -> Vec<Fact> {
+    let fact = |what: &str, value: String, source: &Source| Fact { what: what.to_owned(), value, source: cite(source) };
+    let mut list = Vec::new();
+    if let Some(density) = liquor_density {
+        let words = format!("{} (liquor about {} g/mL)", layer_words(s.layer_against(density)), fixed(density, 2));
+        list.push(fact("against this liquor", words, &s.density_source));
+    }
+    list.push(fact(
+        "against water",
+        format!("{} ({} g/mL)", layer_words(s.layer_against_water()), fixed(s.density_20c_g_ml, 3)),
+        &s.density_source,
+    ));
+    list.push(fact("boils at", format!("{} °C", s.boiling_point_c), &s.boiling_point_source));
+    let flash =
+        s.flash_point_c.map_or_else(|| "none by the usual tests".to_owned(), |t| format!("{} °C", with_minus(t)));
+    list.push(fact("flash point", flash, &s.flash_point_source));
+    let explosive = match (s.lel_vol_pct, s.uel_vol_pct) {
+        (Some(l), Some(u)) => format!("{l}–{u} % by volume in air"),
+        (Some(l), None) => format!("from {l} % by volume in air"),
+        _ => "none listed".to_owned(),
+    };
+    list.push(fact("explosive", explosive, &s.flammability_source));
+    list.push(fact(
+        "dissolves in water",
+        format!("{} g per 100 g", significant(s.solubility_in_water_mass_pct, 3)),
+        &s.solubility_in_water_source,
+    ));
+    let peroxides = match s.peroxide_class {
+        PeroxideClass::No => "not a peroxide former",
+        PeroxideClass::Low => "low tendency: test old stock",
+        PeroxideClass::OnConcentration => "dangerous on evaporating: test first",
+    };
+    list.push(fact("peroxides", peroxides.to_owned(), &s.peroxide_source));
+    if let Some(limits) = exposure_limits_for(&s.id) {
+        list.extend(limit_facts(&limits));
+    }
+    list
+}
+
+fn limit_facts(l: &ExposureLimits) -> Vec<Fact> {
+    let mut list = Vec::new();
+    let mut add = |what: &str, parts: Vec<String>, source: &Source| {
+        if !parts.is_empty() {
+            list.push(Fact { what: what.to_owned(), value: parts.join(", "), source: cite(source) });
+        }
+    };
+    let ppm = |value: Option<f64>, words: &str| value.map(|v| format!("{v} ppm {words}"));
+    let parts = |items: [Option<String>; 3], note: &str| -> Vec<String> {
+        items.into_iter().flatten().chain((!note.is_empty()).then(|| note.to_owned())).collect()
+    };
+    if let Some(v) = l.strictest_twa_ppm {
+        add("lowest average listed", vec![format!("{v} ppm ({})", l.strictest_basis)], &l.special_source);
+    }
+    let osha =
+        [ppm(l.osha_pel_twa_ppm, "over 8 h"), ppm(l.osha_stel_ppm, "short term"), ppm(l.osha_ceiling_ppm, "ceiling")];
+    add("US OSHA", parts(osha, &l.osha_note), &l.osha_source);
+    let niosh = [
+        ppm(l.niosh_rel_twa_ppm, "over the shift"),
+        ppm(l.niosh_stel_ppm, "short term"),
+        ppm(l.niosh_ceiling_ppm, "ceiling"),
+    ];
+    add("US NIOSH", parts(niosh, &l.niosh_note), &l.niosh_source);
+    let skin = if l.eu_skin { "taken up through the skin" } else { "" };
+    add("EU", parts([ppm(l.eu_twa_ppm, "over 8 h"), ppm(l.eu_stel_ppm, "over 15 min"), None], skin), &l.eu_source);
+    add("danger to life", parts([ppm(l.idlh_ppm, ""), None, None], ""), &l.idlh_source);
+    if !l.special_rules.is_empty() {
+        add("rules of its own", vec![l.special_rules.clone()], &l.special_source);
+    }
+    list
+}
+
+fn layer_words(layer: Layer) -> &'static str {
+    match layer {
+        Layer::Lower => "lower layer",
+        Layer::Upper => "upper layer",
+        Layer::Uncertain => "too close to tell: find the layers with a drop of water",
+    }
+}
+
+fn with_minus(t: f64) -> String {
+    t.to_string().replace('-', "−")
+}
+
+/// A source in one line with how far it was checked.
+pub fn cite(source: &Source) -> String {
+    let detail = if source.detail.is_empty() { String::new() } else { format!("; {}", source.detail) };
+    format!("{}{detail} [{}]", source.citation, source.checked.word())
+}
+
+/// The cautions of `all` that belong to `step`.
+fn at_step(all: &[Caution], step: CautionStep) -> Vec<CautionText> {
+    all.iter()
+        .filter(|c| c.step == step)
+        .map(|c| CautionText {
+            sign_word: c.sign_word.word().to_owned(),
+            what_can_happen: c.what_can_happen.clone(),
+            what_to_do: c.what_to_do.clone(),
+            source: cite(&c.source),
+        })
+        .collect()
+}
+
+/// Cautions beside a step: those that hold for any solvent, then those of the solvent chosen.
+pub fn cautions_at(steps: &[CautionStep], solvent: &str) -> Vec<CautionText> {
+    let (any, own) = (general_cautions(), cautions_for(solvent));
+    steps.iter().flat_map(|&step| [at_step(&any, step), at_step(&own, step)].concat()).collect()
+}
+
+/// Cautions that hold for any solvent at these steps.
+pub fn general_cautions_at(steps: &[CautionStep]) -> Vec<CautionText> {
+    let any = general_cautions();
+    steps.iter().flat_map(|&step| at_step(&any, step)).collect()
+}
+
+/// A published K, to be taken over with one tap.
+#[derive(Clone, Debug, PartialEq, Eq)]
+pub struct PublishedRow {
+    /// Value, range, conditions.
+    pub words: String,
+    /// Source, with how far it was checked.
+    pub source: String,
+    /// What is put into the field.
+    pub text: NumberText,
+}
+
+/// Published K of an ingredient, known by its name, in a solvent.
+pub fn published_rows(ingredient: &str, solvent: &str) -> Vec<PublishedRow> {
+    let Some(solute) = known_solute(ingredient) else { return Vec::new() };
+    published_k(&solute.id, solvent)
+        .into_iter()
+        .map(|p| {
+            let mut words = format!("K {}", significant(p.k, 3));
+            let mut spread = String::new();
+            if let (Some(low), Some(high)) = (p.k_low, p.k_high) {
+                words.push_str(&format!(" ({}–{})", significant(low, 3), significant(high, 3)));
+                spread = format!("{low} to {high}");
+            }
+            match (p.temperature_low_c, p.temperature_high_c) {
+                (Some(a), Some(b)) if a == b => words.push_str(&format!(", {a} °C")),
+                (Some(a), Some(b)) => words.push_str(&format!(", {a}–{b} °C")),
+                _ => words.push_str(", temperature not stated"),
+            }
+            words.push_str(&format!(", {}", p.form));
+            words.push_str(match p.basis {
+                KBasis::Neutral => "",
+                KBasis::Monomer => ", undimerised form",
+                KBasis::SolubilityRatio => ", a ratio of two solubilities",
+            });
+            if p.weak {
+                words.push_str(", weak");
+            }
+            if !p.note.is_empty() {
+                words.push_str(&format!(". {}", p.note));
+            }
+            let source = cite(&p.source);
+            PublishedRow { words, text: NumberText { value: p.k.to_string(), spread, source: source.clone() }, source }
+        })
+        .collect()
+}
+
+/// The solute of the library that a name means: its own name, or the longest name within it.
+pub fn known_solute(name: &str) -> Option<Solute> {
+    let name = name.trim().to_lowercase();
+    let all = solutes();
+    let exact = all.iter().find(|s| s.name.to_lowercase() == name || s.id == name);
+    exact.or_else(|| all.iter().filter(|s| name.contains(&s.name.to_lowercase())).max_by_key(|s| s.name.len())).cloned()
+}
+
+#[cfg(test)]
+mod tests {
+    use super::*;
+
+    #[test]
+    fn every_row_has_cautions_codes_and_facts() {
+        let rows = solvent_rows(Some(1.2));
+        assert_eq!(rows.len(), 12);
+        for r in &rows {
+            assert!(!r.cautions.is_empty() && !r.codes.is_empty(), "{}", r.name);
+            for what in ["against this liquor", "against water", "boils at", "flash point", "explosive", "peroxides"] {
+                assert!(r.facts.iter().any(|f| f.what == what && !f.source.is_empty()), "{} {what}", r.name);
+            }
+            assert!(r.codes.iter().all(|c| !c.1.is_empty()));
+        }
+    }
+
+    #[test]
+    fn published_values_are_offered_by_name() {
+        let rows = published_rows("alkaloid (caffeine constants)", "dichloromethane");
+        assert_eq!(rows[0].text.value, "9.5");
+        assert_eq!(rows[0].text.spread, "4.6 to 10.2");
+        assert!(rows[0].text.quantity("K").is_ok());
+        assert!(published_rows("nothing known", "dichloromethane").is_empty());
+        assert_eq!(known_solute("Ethyl vanillin").unwrap().id, "ethyl_vanillin");
+    }
+
+    #[test]
+    fn each_step_has_its_cautions() {
+        use CautionStep::{Isolate, MakeUp, Portions, Strip};
+        for step in [Portions, Isolate, Strip, MakeUp] {
+            assert!(!cautions_at(&[step], "dichloromethane").is_empty());
+        }
+    }
+}
