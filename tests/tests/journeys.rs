@@ -175,9 +175,7 @@ fn a_damaged_entry_is_set_aside_and_not_lost() {
         // Leaving the page must not write the good study over the damaged entry under test.
         page.ask("window.addEventListener('pagehide', e => e.stopImmediatePropagation(), true); return 1;").await?;
         page.reload().await?;
-        let aside = page
-            .ask("return Object.keys(localStorage).filter(k => k.endsWith('-broken')).length;")
-            .await?;
+        let aside = page.ask("return Object.keys(localStorage).filter(k => k.endsWith('-broken')).length;").await?;
         assert!(aside.as_u64().unwrap_or(0) >= 1, "{aside}");
         assert!(page.count("header.top").await? == 1);
         Ok(())

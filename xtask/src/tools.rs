@@ -15,7 +15,7 @@ const TARGET: &str = "wasm32-unknown-unknown";
 
 /// Runs a command, showing what it prints.
 pub fn run(command: &mut Command) -> Result {
-    let name = command.get_program().to_string_lossy().into_owned();
+    let name = Path::new(command.get_program()).file_stem().unwrap_or_default().to_string_lossy().into_owned();
     let status = command.status().map_err(|e| format!("{name} could not be started: {e}."))?;
     if status.success() { Ok(()) } else { Err(format!("{name} did not succeed ({status}); see above.")) }
 }

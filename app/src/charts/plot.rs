@@ -16,6 +16,8 @@ pub type Drawing<B> = Result<(), DrawingAreaErrorKind<<B as DrawingBackend>::Err
 pub(super) const TEXT: f64 = 13.0;
 /// Height of a line of words.
 pub(super) const LINE: f64 = 16.0;
+/// Places tried along a line for its words, less one.
+const PLACES: u32 = 12;
 /// Most points drawn of one curve.
 const MOST_POINTS: usize = 600;
 
@@ -306,25 +308,20 @@ impl Frame {
             return Ok(());
         }
         let width = text_width(guide.words, TEXT);
-        let places = [self.left + 6.0, self.right - 6.0 - width, (self.left + self.right - width) / 2.0]
-            .into_iter()
+        let (first, last) = (self.left + 6.0, (self.right - 6.0 - width).max(self.left + 6.0));
+        let places = (0..=PLACES).map(|i| first + f64::from(i) / f64::from(PLACES) * (last - first));
+        let places = places
             .flat_map(|x| [(x, y - LINE / 2.0 - 2.0), (x, y + LINE / 2.0 + 2.0)])
             .filter(|p| p.1 - LINE / 2.0 >= self.top - LINE && p.1 + LINE / 2.0 <= self.bottom);
-        let room = |&(x, middle): &(f64, f64)| {
-            let from_curves = curves
-                .iter()
-                .flat_map(|c| closely(c))
-                .filter(|p| (x..=x + width).contains(&p.0))
-                .map(|p| (p.1 - middle).abs());
-            let from_words = taken.iter().filter(|t| (t.0 - x).abs() < width).map(|t| (t.1 - middle).abs() - 4.0);
-            // More than a line of room is as good as any: the first such place is taken.
-            from_curves.chain(from_words).fold(LINE, f64::min)
+        // How much is in the way: points of curves, and any words above all.
+        let in_the_way = |&(x, middle): &(f64, f64)| {
+            let hidden =
+                |p: &(f64, f64)| (x - 3.0..=x + width + 3.0).contains(&p.0) && (p.1 - middle).abs() < LINE / 2.0 + 1.0;
+            let points = curves.iter().flat_map(|c| closely(c)).filter(hidden).count();
+            let words = taken.iter().filter(|t| (t.0 - x).abs() < width && (t.1 - middle).abs() < LINE).count();
+            points + 1000 * words
         };
-        let best = places.fold(None, |best: Option<((f64, f64), f64)>, place| {
-            let own = room(&place);
-            if best.is_none_or(|b| own > b.1) { Some((place, own)) } else { best }
-        });
-        let (x, middle) = best.map_or((self.left + 6.0, y + LINE / 2.0 + 2.0), |b| b.0);
+        let (x, middle) = places.min_by_key(in_the_way).unwrap_or((first, y + LINE / 2.0 + 2.0));
         taken.push((x, middle));
         pen.words_on_paper(guide.words, (x, middle), guide.color, Hang::Left)
     }
@@ -334,10 +331,12 @@ impl Frame {
         let (width, _) = pen.size();
         let room = width - self.right - LEADER - 2.0;
         let (low, high) = (self.top - LINE / 2.0, self.bottom + LINE / 2.0);
-        let fits = |lines: usize| ends.len() as f64 * (lines as f64 * LINE + BETWEEN) <= high - low;
-        let most = (1..=3).rev().find(|&n| fits(n)).unwrap_or(1);
-        let lines: Vec<Vec<String>> = ends.iter().map(|e| wrapped(e.words, TEXT, room, most)).collect();
-        let heights: Vec<f64> = lines.iter().map(|l| l.len().max(1) as f64 * LINE + BETWEEN).collect();
+        let set =
+            |most: usize| -> Vec<Vec<String>> { ends.iter().map(|e| wrapped(e.words, TEXT, room, most)).collect() };
+        let height = |lines: &Vec<String>| lines.len().max(1) as f64 * LINE + BETWEEN;
+        let fits = |lines: &Vec<Vec<String>>| lines.iter().map(height).sum::<f64>() <= high - low;
+        let lines = (2..=4).rev().map(set).find(fits).unwrap_or_else(|| set(1));
+        let heights: Vec<f64> = lines.iter().map(height).collect();
         let wanted: Vec<f64> = ends.iter().map(|e| e.at.1).collect();
         let middles = spread_apart(&wanted, &heights, low, high);
         for ((end, lines), middle) in ends.iter().zip(lines).zip(middles) {

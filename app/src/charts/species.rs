@@ -42,7 +42,7 @@ pub fn draw_species<B: DrawingBackend>(
     let left = 48.0;
     let right = width - 14.0;
     let names: Vec<f64> = data.series.iter().map(|s| text_width(&s.0, TEXT) + 14.0).collect();
-    let rows = ((names.iter().sum::<f64>() / (width - 4.0)).ceil() as usize).clamp(1, 3);
+    let rows = ((names.iter().sum::<f64>() / (width - left - 2.0).max(1.0)).ceil() as usize).clamp(1, 3);
     let top = 8.0 + LINE * (rows as f64 + 1.0) + 10.0;
     let frame = Frame {
         left,
@@ -81,7 +81,7 @@ pub fn draw_species<B: DrawingBackend>(
         let wanted: Vec<f64> = members.iter().map(|&i| peaks[i].map_or(left, |p| frame.at_x(p.0))).collect();
         let sizes: Vec<f64> = members.iter().map(|&i| names[i]).collect();
         let y = 8.0 + LINE * (row as f64 + 1.5) + 2.0;
-        for (&i, middle) in members.iter().zip(spread_apart(&wanted, &sizes, 2.0, width - 2.0)) {
+        for (&i, middle) in members.iter().zip(spread_apart(&wanted, &sizes, left, width - 2.0)) {
             let Some((at_ph, share)) = peaks[i] else { continue };
             let (dash, stroke, color) = looks[i];
             pen.line(

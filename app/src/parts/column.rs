@@ -134,7 +134,7 @@ fn drawn(level: &ColumnLevel, largest_ml: f64) -> Drawn {
         weight: share_of(level.volume_ml, largest_ml).max(LEAST_WEIGHT),
         tone: PALEST + (DEEPEST - PALEST) * share_of(level.brix.unwrap_or(0.0), BRIX_OF_DEEPEST),
         // A quarter of the vessel at most: a fine band in the liquid.
-        target_percent: if target > 0.0 { (25.0 * target).max(2.0) } else { 0.0 },
+        target_percent: if target > 0.0 { (25.0 * target).max(3.5) } else { 0.0 },
         solvent_percent: if solvent > 0.0 { (100.0 * solvent).max(6.0) } else { 0.0 },
         spoken,
     }

@@ -31,7 +31,8 @@ pub fn DataTable(
                                 .enumerate()
                                 .map(|(i, words)| {
                                     let number = set.with(|s| s.numeric.get(i).copied().unwrap_or(false));
-                                    view! { <th scope="col" class:number=number>{words}</th> }
+                                    let long = set.with(|s| s.long.get(i).copied().unwrap_or(false));
+                                    view! { <th scope="col" class:number=number class:long=long>{words}</th> }
                                 })
                                 .collect_view()
                         }}
@@ -42,7 +43,7 @@ pub fn DataTable(
                         set.with(|s| {
                             s.rows
                                 .iter()
-                                .map(|row| view! { <tr>{row_cells(row, &s.numeric)}</tr> })
+                                .map(|row| view! { <tr>{row_cells(row, &s.numeric, &s.long)}</tr> })
                                 .collect_view()
                         })
                     }}
@@ -53,18 +54,19 @@ pub fn DataTable(
 }
 
 /// The cells of one row.
-fn row_cells(row: &[Cell], numeric: &[bool]) -> impl IntoView + use<> {
+fn row_cells(row: &[Cell], numeric: &[bool], long: &[bool]) -> impl IntoView + use<> {
     row.iter()
         .zip(numeric)
         .enumerate()
         .map(|(i, (cell, &number))| {
             let Cell { text, blanks, after, .. } = cell.clone();
+            let long = long[i];
             let blanks = (number && !blanks.is_empty())
                 .then(|| view! { <span class="blanks" aria-hidden="true">{blanks}</span> });
             if i == 0 {
-                view! { <th scope="row" class:number=number>{text}{blanks}{after}</th> }.into_any()
+                view! { <th scope="row" class:number=number class:long=long>{text}{after}{blanks}</th> }.into_any()
             } else {
-                view! { <td class:number=number>{text}{blanks}{after}</td> }.into_any()
+                view! { <td class:number=number class:long=long>{text}{after}{blanks}</td> }.into_any()
             }
         })
         .collect_view()
@@ -76,18 +78,25 @@ struct SetTable {
     rows: Vec<Vec<Cell>>,
     /// Which columns are numbers.
     numeric: Vec<bool>,
+    /// Which columns hold sentences.
+    long: Vec<bool>,
 }
+
+/// From this many characters on, a cell is a sentence that needs room.
+const SENTENCE: usize = 28;
 
 /// Aligns each column; rows that are too short are filled with empty cells.
 fn columns_set(rows: &[Vec<String>]) -> SetTable {
     let width = rows.iter().map(Vec::len).max().unwrap_or(0);
-    let mut set = SetTable { rows: vec![Vec::with_capacity(width); rows.len()], numeric: Vec::with_capacity(width) };
+    let mut set = SetTable { rows: vec![Vec::with_capacity(width); rows.len()], ..SetTable::default() };
     for column in 0..width {
         let cells: Vec<&str> = rows.iter().map(|r| r.get(column).map_or("", String::as_str)).collect();
         let cells = aligned(&cells);
         let filled = cells.iter().filter(|c| !c.text.is_empty()).count();
         let numbers = cells.iter().filter(|c| c.numeric).count();
-        set.numeric.push(numbers > 0 && numbers * 2 >= filled);
+        let numeric = numbers > 0 && numbers * 2 >= filled;
+        set.numeric.push(numeric);
+        set.long.push(!numeric && cells.iter().any(|c| c.text.chars().count() >= SENTENCE));
         for (row, cell) in set.rows.iter_mut().zip(cells) {
             row.push(cell);
         }

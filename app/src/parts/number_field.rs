@@ -37,6 +37,7 @@ pub fn NumberField(
         set(&mut text, event_target_value(&ev));
         on_change.run(text);
     };
+    let said = move || value.with(summary).unwrap_or_else(|| "± and source".to_owned());
     view! {
         <div class="field field-number" class:has-problem=move || problem.with(Option::is_some)>
             <label class="field-label" for=move || ids.input.get()>{label}</label>
@@ -52,7 +53,7 @@ pub fn NumberField(
                     prop:value=move || value.with(|v| v.value.clone())
                     aria-invalid=move || problem.with(|p| p.is_some().then_some("true"))
                     aria-describedby=move || ids.described_by(problem.with(Option::is_some))
-                    on:input=move |ev| change(|text, typed| text.value = typed, ev.into())
+                    on:input=move |ev| change(|text, typed| text.value = typed, ev)
                 />
                 {has_unit.then(|| view! { <span class="unit" id=move || ids.of("unit")>{unit}</span> })}
             </div>
@@ -61,9 +62,9 @@ pub fn NumberField(
             {with_source
                 .then(|| {
                     view! {
-                        <details class="source">
-                            <summary>
-                                {move || value.with(|v| summary(v)).unwrap_or_else(|| "± and source".to_owned())}
+                        <details class="source" class:unsaid=move || value.with(|v| summary(v).is_none())>
+                            <summary title=said>
+                                <span class="source-said">{said}</span>
                             </summary>
                             <div class="source-fields">
                                 <label class="field-label" for=move || ids.of("spread")>
@@ -76,7 +77,7 @@ pub fn NumberField(
                                     placeholder="0.2 or 4.6 to 10.2"
                                     id=move || ids.of("spread")
                                     prop:value=move || value.with(|v| v.spread.clone())
-                                    on:input=move |ev| change(|text, typed| text.spread = typed, ev.into())
+                                    on:input=move |ev| change(|text, typed| text.spread = typed, ev)
                                 />
                                 <label class="field-label" for=move || ids.of("source")>
                                     "source"
@@ -88,7 +89,7 @@ pub fn NumberField(
                                     placeholder="measured, label, reference"
                                     id=move || ids.of("source")
                                     prop:value=move || value.with(|v| v.source.clone())
-                                    on:input=move |ev| change(|text, typed| text.source = typed, ev.into())
+                                    on:input=move |ev| change(|text, typed| text.source = typed, ev)
                                 />
                             </div>
                         </details>

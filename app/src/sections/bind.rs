@@ -7,7 +7,6 @@ use crate::state::work::{Good, work};
 use leptos::prelude::*;
 use serde::Serialize;
 use serde::de::DeserializeOwned;
-use std::sync::Arc;
 
 /// Words of a number field.
 #[derive(Clone, Copy, Default)]
@@ -30,6 +29,43 @@ pub const fn hinted(label: &'static str, unit: &'static str, hint: &'static str)
     Words { label, unit, hint }
 }
 
+// The closures of a field are boxed at once: a memo or a callback is then made for one type, not
+// for each field, which keeps the page small.
+type Of<T> = Box<dyn Fn(&Draft) -> T + Send + Sync>;
+type Get<T> = Box<dyn Fn(&Draft) -> Option<&T> + Send + Sync>;
+type Edit<T> = Box<dyn Fn(&mut Draft) -> Option<&mut T> + Send + Sync>;
+type Set = Box<dyn Fn(&mut Draft, String) + Send + Sync>;
+
+/// Something of the draft, remembered.
+fn memo_of<T>(of: Of<T>) -> Signal<T>
+where
+    T: Clone + PartialEq + Send + Sync + 'static,
+{
+    let draft = work().draft;
+    Memo::new(move |_| draft.with(|d| of(d))).into()
+}
+
+/// What is typed in a field, remembered.
+fn typed_of<T>(get: Get<T>) -> Signal<T>
+where
+    T: Clone + Default + PartialEq + Send + Sync + 'static,
+{
+    let draft = work().draft;
+    Memo::new(move |_| draft.with(|d| get(d).cloned().unwrap_or_default())).into()
+}
+
+/// Writes what is typed.
+fn write_to<T: Send + Sync + 'static>(edit: Edit<T>) -> Callback<T> {
+    let draft = work().draft;
+    Callback::new(move |typed: T| {
+        draft.update(|d| {
+            if let Some(field) = edit(d) {
+                *field = typed;
+            }
+        });
+    })
+}
+
 /// A number at `path`, read by `get` and changed by `edit`; both find nothing once its row is gone.
 pub fn number(
     words: Words,
@@ -37,17 +73,7 @@ pub fn number(
     get: impl Fn(&Draft) -> Option<&NumberText> + Send + Sync + 'static,
     edit: impl Fn(&mut Draft) -> Option<&mut NumberText> + Send + Sync + 'static,
 ) -> AnyView {
-    let draft = work().draft;
-    let path = Memo::new(move |_| draft.with(&path));
-    let value = Memo::new(move |_| draft.with(|d| get(d).cloned().unwrap_or_default()));
-    let on_change = Callback::new(move |text: NumberText| {
-        draft.update(|d| {
-            if let Some(field) = edit(d) {
-                *field = text;
-            }
-        });
-    });
-    number_view(words, path.into(), value.into(), on_change)
+    number_view(words, memo_of(Box::new(path)), typed_of(Box::new(get)), write_to(Box::new(edit)))
 }
 
 fn number_view(
@@ -78,16 +104,10 @@ pub fn text(
     get: impl Fn(&Draft) -> Option<&String> + Send + Sync + 'static,
     edit: impl Fn(&mut Draft) -> Option<&mut String> + Send + Sync + 'static,
 ) -> AnyView {
-    let draft = work().draft;
-    let path: Signal<String> = Memo::new(move |_| draft.with(&path)).into();
-    let value: Signal<String> = Memo::new(move |_| draft.with(|d| get(d).cloned().unwrap_or_default())).into();
-    let on_change = Callback::new(move |typed: String| {
-        draft.update(|d| {
-            if let Some(field) = edit(d) {
-                *field = typed;
-            }
-        });
-    });
+    text_view(words, memo_of(Box::new(path)), typed_of(Box::new(get)), write_to(Box::new(edit)))
+}
+
+fn text_view(words: Words, path: Signal<String>, value: Signal<String>, on_change: Callback<String>) -> AnyView {
     let problem = work().problem_at(path);
     view! { <TextField label=words.label path value on_change problem hint=words.hint/> }.into_any()
 }
@@ -123,10 +143,17 @@ pub fn choice_of(
     get: impl Fn(&Draft) -> String + Send + Sync + 'static,
     set: impl Fn(&mut Draft, String) + Send + Sync + 'static,
 ) -> AnyView {
+    choice_view(label, memo_of(Box::new(path)), memo_of(Box::new(options)), memo_of(Box::new(get)), Box::new(set))
+}
+
+fn choice_view(
+    label: &'static str,
+    path: Signal<String>,
+    options: Signal<Vec<(String, String)>>,
+    value: Signal<String>,
+    set: Set,
+) -> AnyView {
     let draft = work().draft;
-    let path: Signal<String> = Memo::new(move |_| draft.with(&path)).into();
-    let options: Signal<Vec<(String, String)>> = Memo::new(move |_| draft.with(&options)).into();
-    let value: Signal<String> = Memo::new(move |_| draft.with(&get)).into();
     let on_change = Callback::new(move |chosen: String| draft.update(|d| set(d, chosen)));
     let problem = work().problem_at(path);
     view! { <ChoiceField label path options value on_change problem/> }.into_any()
@@ -142,9 +169,15 @@ pub fn of_plan<T>(of: impl Fn(&Good) -> T + Send + Sync + 'static) -> Signal<T>
 where
     T: Clone + Default + PartialEq + Send + Sync + 'static,
 {
+    plan_memo(Box::new(of))
+}
+
+fn plan_memo<T>(of: Box<dyn Fn(&Good) -> T + Send + Sync>) -> Signal<T>
+where
+    T: Clone + Default + PartialEq + Send + Sync + 'static,
+{
     let shown = work().shown;
-    let good: Memo<Option<Arc<Good>>> = Memo::new(move |_| shown.with(|s| s.good.clone()));
-    Memo::new(move |_| good.with(|g| g.as_ref().map(|g| of(g)).unwrap_or_default())).into()
+    Memo::new(move |_| shown.with(|s| s.good.as_ref().map(|g| of(g)).unwrap_or_default())).into()
 }
 
 /// Whether what is shown is older than the text.
@@ -158,11 +191,14 @@ pub fn of_draft<T>(of: impl Fn(&Draft) -> T + Send + Sync + 'static) -> Signal<T
 where
     T: Clone + PartialEq + Send + Sync + 'static,
 {
-    let draft = work().draft;
-    Memo::new(move |_| draft.with(&of)).into()
+    memo_of(Box::new(of))
 }
 
 /// A button with plain words.
-pub fn button(words: impl Into<String>, class: &'static str, press: impl Fn() + 'static) -> impl IntoView {
-    view! { <button type="button" class=class on:click=move |_| press()>{words.into()}</button> }
+pub fn button(words: impl Into<String>, class: &'static str, press: impl Fn() + 'static) -> AnyView {
+    button_view(words.into(), class, Box::new(press))
+}
+
+fn button_view(words: String, class: &'static str, press: Box<dyn Fn()>) -> AnyView {
+    view! { <button type="button" class=class on:click=move |_| press()>{words}</button> }.into_any()
 }

@@ -93,6 +93,7 @@ fn LossFields(
     let at = move |d: &Draft, last: &str| {
         format!("losses[{}].{last}", d.losses.iter().position(|l| l.id == id).unwrap_or_default())
     };
+    let place = of_draft(move |d| format!("loss {}", d.losses.iter().position(|l| l.id == id).map_or(0, |i| i + 1)));
     let unit = of_draft(move |d| match loss(d, id).map(|l| l.amount_as) {
         Some(LossAs::Fraction) => "fraction",
         _ => "mL",
@@ -103,6 +104,10 @@ fn LossFields(
     };
     view! {
         <div class="row loss">
+            <div class="row-head">
+                <strong>{move || place.get()}</strong>
+                {button("Remove this loss", "quiet", move || w.draft.update(|d| d.losses.retain(|l| l.id != id)))}
+            </div>
             <div class="fields">
                 {text(
                     words("what happened", ""),
@@ -140,7 +145,6 @@ fn LossFields(
                         move |d| loss_mut(d, id).map(|l| &mut l.amount),
                     )
                 }}
-                {button("Remove this loss", "quiet", move || w.draft.update(|d| d.losses.retain(|l| l.id != id)))}
             </div>
         </div>
     }

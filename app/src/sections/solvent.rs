@@ -6,11 +6,14 @@ use super::step::{Cautions, Step};
 use crate::parts::CautionBox;
 use crate::state::NumberText;
 use crate::state::work::work;
-use crate::view_model::solvent::{SolventRow, general_cautions_at, solvent_rows};
+use crate::view_model::solvent::{Fact, SolventRow, cautions_at, solvent_rows};
 use leptos::prelude::*;
 use unstir_core::library::cautions::CautionStep;
 use unstir_core::library::solvents::solvent;
 use unstir_core::process::concentrate::density_g_per_ml;
+
+/// Longest value that stands in the list of facts; longer ones get a line of their own.
+const LONGEST_FACT: usize = 90;
 
 /// The step.
 #[component]
@@ -22,6 +25,8 @@ pub fn SolventStep() -> impl IntoView {
             format!("{}: D of {} is {d} at pH {}", g.study.solvent.name, t.name, g.plan.extraction_ph)
         })
     });
+    let id = of_draft(|d| d.solvent.id.clone());
+    let cautions = Memo::new(move |_| id.with(|s| cautions_at(&[CautionStep::Any, CautionStep::Solvent], s)));
     // To two decimals, so that the list is not built anew at each keystroke.
     let density = of_plan(|g| g.plan.liquor.brix.map(|b| (density_g_per_ml(b) * 100.0).round() / 100.0));
     view! {
@@ -29,8 +34,8 @@ pub fn SolventStep() -> impl IntoView {
             <p class="quiet">
                 "Nothing here says that a solvent may be used for your purpose: local rules and licensed practice decide, and the supplier's safety data sheet prevails over these rows."
             </p>
-            <Cautions list=Signal::stored(general_cautions_at(&[CautionStep::Any, CautionStep::Solvent]))/>
             <OwnSolvent/>
+            <Cautions list=cautions/>
             <PartitionFields/>
             <h3>"Solvents of the library"</h3>
             <div class="choices">
@@ -85,18 +90,20 @@ fn Choice(
     let chosen = of_draft(move |d| d.solvent.id == id);
     let (id, name, density) = (row.id.clone(), row.name.clone(), row.density.clone());
     let choose = move || w.draft.update(|d| d.choose_solvent(&id, &name, density.clone()));
-    let facts = row.facts.into_iter().map(|f| {
+    let sources = row.facts.clone().into_iter().map(|f| view! { <li>{format!("{}: {}", f.what, f.source)}</li> });
+    let (long, short): (Vec<Fact>, Vec<Fact>) = row.facts.into_iter().partition(|f| f.value.len() > LONGEST_FACT);
+    let short = short.into_iter().map(|f| {
         view! {
-            <div class="fact" title=f.source>
+            <div class="fact">
                 <dt>{f.what}</dt>
                 <dd>{f.value}</dd>
             </div>
         }
     });
+    let long = long.into_iter().map(|f| view! { <p class="fact-long">{format!("{}: {}", f.what, f.value)}</p> });
     let codes = row.codes.into_iter().map(|(code, meaning)| view! { <li><strong>{code}</strong>" "{meaning}</li> });
     let cautions = row.cautions.into_iter().map(|caution| view! { <CautionBox caution/> });
     let note = (!row.note.is_empty()).then(|| view! { <p class="quiet">{row.note}</p> });
-    let sources = row.density.source;
     view! {
         <div class="row choice" class:chosen=chosen>
             <div class="row-head">
@@ -104,11 +111,15 @@ fn Choice(
                 <span class="role" hidden=move || !chosen.get()>"in use"</span>
                 <span hidden=move || chosen.get()>{button("Use this solvent", "", choose)}</span>
             </div>
-            <dl class="facts">{facts.collect_view()}</dl>
+            <dl class="facts">{short.collect_view()}</dl>
+            {long.collect_view()}
             <ul class="codes">{codes.collect_view()}</ul>
             <div class="cautions">{cautions.collect_view()}</div>
             {note}
-            <p class="quiet">"density: " {sources}</p>
+            <details class="quiet">
+                <summary>"sources"</summary>
+                <ul>{sources.collect_view()}</ul>
+            </details>
         </div>
     }
 }

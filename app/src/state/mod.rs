@@ -2,8 +2,8 @@
 
 pub mod demos;
 pub mod draft;
-pub mod file_text;
 mod edit;
+pub mod file_text;
 mod from_study;
 pub mod number_text;
 pub mod shelf;

@@ -60,6 +60,14 @@ impl Draft {
         let judged: Vec<Problem> =
             check(&study).into_iter().filter(|j| problems.iter().all(|p: &Problem| p.at != j.at)).collect();
         problems.extend(judged);
+        // Without a solvent, or a name for the target, what is missing is that and not a K.
+        let no_solvent = self.solvent.id.trim().is_empty();
+        if no_solvent {
+            problems.push(Problem::new("solvent.name", "no solvent is chosen; take one of the list, or name your own"));
+        }
+        if no_solvent || self.target().is_some_and(|t| t.name.trim().is_empty()) {
+            problems.retain(|p| p.at != "partition");
+        }
         if problems.is_empty() { Ok(study) } else { Err(problems) }
     }
 

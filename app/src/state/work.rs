@@ -115,7 +115,7 @@ impl Work {
         let (id, draft) = last.or_else(any).unwrap_or_else(fresh);
         let work = Self::new(store, id, draft);
         work.message.set(message);
-        work.keep();
+        work.write();
         work
     }
 

@@ -1,6 +1,6 @@
 //! Protonation states, readings of a disputed constant, and their charts.
 
-use super::format::{fixed, measured_percent, percent, significant};
+use super::format::{fixed, measured_percent, percent, significant, stated};
 use crate::charts::{LogDData, SpeciesData};
 use unstir_core::plan::{Curves, IngredientRow, Plan};
 use unstir_core::study::Study;
@@ -93,7 +93,7 @@ pub fn readings_rows(plan: &Plan) -> Vec<Vec<String>> {
                 taken.push_str(", in use");
             }
             vec![
-                super::format::fixed(r.printed, 2),
+                stated(r.printed),
                 taken,
                 fixed(r.pka, 2),
                 percent(r.fraction_neutral),

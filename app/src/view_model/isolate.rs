@@ -1,6 +1,6 @@
 //! Plan and isolate side by side.
 
-use super::format::{measured, measured_percent, percent, significant};
+use super::format::{measured, measured_percent, percent, significant, stated};
 use unstir_core::plan::Plan;
 use unstir_core::study::Study;
 
@@ -18,7 +18,7 @@ pub fn comparison_rows(plan: &Plan) -> Vec<Vec<String>> {
         None => "none: more than full equilibrium gives".to_owned(),
     };
     let d = i.apparent_d.map_or_else(|| "none explains it".to_owned(), |d| significant(d, 3));
-    let planned_e = plan.stages.first().map_or_else(String::new, |s| significant(s.efficiency, 3));
+    let planned_e = plan.stages.first().map_or_else(String::new, |s| stated(s.efficiency));
     vec![
         row("target charged", format!("{} mg", significant(i.charged_mg, 4)), String::new()),
         row(

@@ -1,6 +1,6 @@
 //! Stage by stage, and the questions asked the other way round.
 
-use super::format::{fixed, percent, significant};
+use super::format::{fixed, percent, significant, stated};
 use crate::charts::RemovalData;
 use crate::state::work::Good;
 use unstir_core::plan::Plan;
@@ -41,7 +41,7 @@ pub fn stages_rows(good: &Good) -> Vec<Vec<String>> {
             vec![
                 s.stage.to_string(),
                 fixed(s.solvent_ml, 1),
-                significant(s.efficiency, 2),
+                stated(s.efficiency),
                 fixed(s.liquor_ml, 1),
                 fixed(s.extract_ml, 1),
                 significant(at(&s.extract_mg), 3),

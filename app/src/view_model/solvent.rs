@@ -148,6 +148,11 @@ fn with_minus(t: f64) -> String {
     t.to_string().replace('-', "−")
 }
 
+fn capital(text: &str) -> String {
+    let mut c = text.chars();
+    c.next().map(|first| first.to_uppercase().chain(c).collect()).unwrap_or_default()
+}
+
 /// A source in one line with how far it was checked.
 pub fn cite(source: &Source) -> String {
     let detail = if source.detail.is_empty() { String::new() } else { format!("; {}", source.detail) };
@@ -217,7 +222,7 @@ pub fn published_rows(ingredient: &str, solvent: &str) -> Vec<PublishedRow> {
                 words.push_str(", weak");
             }
             if !p.note.is_empty() {
-                words.push_str(&format!(". {}", p.note));
+                words.push_str(&format!(". {}", capital(&p.note)));
             }
             let source = cite(&p.source);
             PublishedRow { words, text: NumberText { value: p.k.to_string(), spread, source: source.clone() }, source }

@@ -10,10 +10,8 @@ use thirtyfour::prelude::*;
 
 /// The built page: `UNSTIR_PAGE`, or where `cargo xtask build` puts it.
 fn page_file() -> PathBuf {
-    let file = std::env::var_os("UNSTIR_PAGE").map_or_else(
-        || PathBuf::from(concat!(env!("CARGO_MANIFEST_DIR"), "/../dist/unstir.html")),
-        PathBuf::from,
-    );
+    let file = std::env::var_os("UNSTIR_PAGE")
+        .map_or_else(|| PathBuf::from(concat!(env!("CARGO_MANIFEST_DIR"), "/../dist/unstir.html")), PathBuf::from);
     assert!(file.exists(), "{} is not built; run `cargo xtask test`, or `cargo xtask build` first", file.display());
     file.canonicalize().expect("a path")
 }
