@@ -30,7 +30,8 @@ pub fn build() -> Result {
     tools::wasm_target()?;
     let wasm_opt = tools::wasm_opt_or_notice();
     say::step("Building the page (about 2 minutes the first time)");
-    run(tools::cargo().args(tools::quiet()).args([
+    let (name, flags) = tools::page_flags();
+    run(tools::cargo().env(name, flags).args(tools::quiet()).args([
         "build",
         "--release",
         "--locked",

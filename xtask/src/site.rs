@@ -13,6 +13,8 @@ fn trunk() -> Result<Command> {
     tools::wasm_bindgen()?;
     let mut c = Command::new(tool);
     c.current_dir(root()).env("PATH", tools::path_with_tools()).env("CARGO_TARGET_DIR", target());
+    let (name, flags) = tools::page_flags();
+    c.env(name, flags);
     // trunk 0.21 takes NO_COLOR for an option of its own and stops.
     c.env_remove("NO_COLOR");
     Ok(c)

@@ -37,6 +37,23 @@ pub fn cargo() -> Command {
     c
 }
 
+/// How the page is compiled: as `.cargo/config.toml` says, and without the paths of this machine.
+pub fn page_flags() -> (&'static str, std::ffi::OsString) {
+    let mut flags = std::ffi::OsString::from("--cfg erase_components");
+    let home = std::env::var_os("CARGO_HOME").map(PathBuf::from).or_else(|| {
+        std::env::var_os("HOME").or_else(|| std::env::var_os("USERPROFILE")).map(|h| PathBuf::from(h).join(".cargo"))
+    });
+    // A path with a blank would be taken for two flags; such a page keeps its paths.
+    for (path, name) in [(home, "crates"), (Some(crate::root()), "unstir")] {
+        if let Some(path) = path.filter(|p| !p.to_string_lossy().contains(' ')) {
+            flags.push(" --remap-path-prefix=");
+            flags.push(path);
+            flags.push(format!("={name}"));
+        }
+    }
+    ("CARGO_TARGET_WASM32_UNKNOWN_UNKNOWN_RUSTFLAGS", flags)
+}
+
 /// Silence for cargo where nobody watches; on a terminal its progress bar stays.
 pub fn quiet() -> &'static [&'static str] {
     if std::io::stderr().is_terminal() { &[] } else { &["--quiet"] }

@@ -3,6 +3,7 @@
 use super::ink::Ink;
 use super::plot::Drawing;
 use super::screen::{Screen, screen_changes, watch_size};
+use crate::parts::{live, live_view};
 use leptos::html;
 use leptos::prelude::*;
 use plotters::coord::Shift;
@@ -124,10 +125,10 @@ pub(super) fn chart_figure<D: Drawn>(data: Signal<Option<D>>) -> impl IntoView {
 
     let table = Memo::new(move |_| data.with(|d| d.as_ref().map(Drawn::table).unwrap_or_default()));
     view! {
-        <figure class="chart" hidden=move || data.with(Option::is_none)>
-            <figcaption>{move || read(D::title)}</figcaption>
+        <figure class="chart" hidden=live(move || data.with(Option::is_none))>
+            <figcaption>{live(move || read(D::title))}</figcaption>
             <div class="chart-box">
-                <canvas node_ref=canvas role="img" aria-label=move || read(D::alt)></canvas>
+                <canvas node_ref=canvas role="img" aria-label=live(move || read(D::alt))></canvas>
             </div>
             <details class="quiet">
                 <summary>"numbers"</summary>
@@ -135,14 +136,14 @@ pub(super) fn chart_figure<D: Drawn>(data: Signal<Option<D>>) -> impl IntoView {
                     <table>
                         <thead>
                             <tr>
-                                {move || {
+                                {live_view(move || {
                                     let cell = |words| view! { <th scope="col" class="number">{words}</th> };
                                     table.get().head.into_iter().map(cell).collect_view()
-                                }}
+                                })}
                             </tr>
                         </thead>
                         <tbody>
-                            {move || {
+                            {live_view(move || {
                                 let row = |cells: Vec<String>| {
                                     let cell = |(i, words)| {
                                         if i == 0 {
@@ -154,7 +155,7 @@ pub(super) fn chart_figure<D: Drawn>(data: Signal<Option<D>>) -> impl IntoView {
                                     view! { <tr>{cells.into_iter().enumerate().map(cell).collect_view()}</tr> }
                                 };
                                 table.get().rows.into_iter().map(row).collect_view()
-                            }}
+                            })}
                         </tbody>
                     </table>
                 </div>

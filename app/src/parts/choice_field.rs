@@ -1,6 +1,7 @@
 //! A field for one of a few.
 
 use super::field::{Ids, problem_line};
+use super::live::{live, live_view};
 use leptos::prelude::*;
 
 /// One of several options: label above, what is wrong with it below.
@@ -34,29 +35,29 @@ pub fn ChoiceField(
         shown
     });
     view! {
-        <div class="field field-choice" class:has-problem=move || problem.with(Option::is_some)>
-            <label class="field-label" for=move || ids.input.get()>{label}</label>
+        <div class="field field-choice" class:has-problem=live(move || problem.with(Option::is_some))>
+            <label class="field-label" for=live(move || ids.input.get())>{label}</label>
             <div class="field-line">
                 <select
-                    id=move || ids.input.get()
-                    aria-invalid=move || problem.with(|p| p.is_some().then_some("true"))
-                    aria-describedby=move || ids.described_by(problem.with(Option::is_some))
+                    id=live(move || ids.input.get())
+                    aria-invalid=live(move || problem.with(|p| p.is_some().then_some("true")))
+                    aria-describedby=live(move || ids.described_by(problem.with(Option::is_some)))
                     on:change=move |ev| on_change.run(event_target_value(&ev))
                 >
-                    {move || {
+                    {live_view(move || {
                         shown
                             .get()
                             .into_iter()
                             .map(|(of_option, words)| {
                                 let own = of_option.clone();
                                 view! {
-                                    <option value=of_option prop:selected=move || value.with(|v| *v == own)>
+                                    <option value=of_option prop:selected=live(move || value.with(|v| *v == own))>
                                         {words}
                                     </option>
                                 }
                             })
                             .collect_view()
-                    }}
+                    })}
                 </select>
             </div>
             {problem_line(ids, problem)}

@@ -1,5 +1,6 @@
 //! The liquid itself, running down the page.
 
+use super::live::{each_row, live};
 use leptos::prelude::*;
 
 /// The liquid after one step.
@@ -57,14 +58,12 @@ pub fn Column(
 ) -> impl IntoView {
     // Levels are known by their place, so that an element stays while its level changes and the
     // change of height can be seen.
-    let count = Memo::new(move |_| levels.with(Vec::len));
+    let places = Memo::new(move |_| (0..levels.with(Vec::len) as u32).collect()).into();
     let largest = Memo::new(move |_| levels.with(|l| largest_volume(l)));
     view! {
         <nav class="column" aria-label="The liquid, step by step">
             <ol class="levels">
-                <For each=move || 0..count.get() key=|i| *i let:i>
-                    {level_item(levels, largest, i)}
-                </For>
+                {each_row(places, move |i| level_item(levels, largest, i as usize))}
             </ol>
         </nav>
     }
@@ -78,26 +77,26 @@ fn level_item(levels: Signal<Vec<ColumnLevel>>, largest: Memo<f64>, i: usize) ->
     let part = move |of: fn(&Drawn) -> f64| drawn.with(|d| d.as_ref().map_or(0.0, of));
     let leaves = Memo::new(move |_| text(|l| &l.leaves));
     view! {
-        <li class="level" style:flex-grow=move || format!("{:.4}", part(|d| d.weight))>
+        <li class="level" style:flex-grow=live(move || format!("{:.4}", part(|d| d.weight)))>
             <a
                 class="level-link"
-                href=move || format!("#{}", text(|l| &l.anchor))
-                aria-label=move || drawn.with(|d| d.as_ref().map_or_else(String::new, |d| d.spoken.clone()))
+                href=live(move || format!("#{}", text(|l| &l.anchor)))
+                aria-label=live(move || drawn.with(|d| d.as_ref().map_or_else(String::new, |d| d.spoken.clone())))
             >
                 <span class="vessel" aria-hidden="true">
-                    <span class="tone" style:opacity=move || format!("{:.3}", part(|d| d.tone))></span>
-                    <span class="target-band" style:width=move || format!("{:.1}%", part(|d| d.target_percent))></span>
+                    <span class="tone" style:opacity=live(move || format!("{:.3}", part(|d| d.tone)))></span>
+                    <span class="target-band" style:width=live(move || format!("{:.1}%", part(|d| d.target_percent)))></span>
                     <span
                         class="solvent-band"
-                        style:height=move || format!("{:.1}%", part(|d| d.solvent_percent))
-                        class:none=move || part(|d| d.solvent_percent) <= 0.0
+                        style:height=live(move || format!("{:.1}%", part(|d| d.solvent_percent)))
+                        class:none=live(move || part(|d| d.solvent_percent) <= 0.0)
                     ></span>
                 </span>
                 <span class="level-words" aria-hidden="true">
-                    <span class="level-step">{move || text(|l| &l.step)}</span>
-                    <span class="level-label">{move || text(|l| &l.label)}</span>
-                    <span class="leaves" class:none=move || leaves.with(String::is_empty)>
-                        {move || leaves.get()}
+                    <span class="level-step">{live(move || text(|l| &l.step))}</span>
+                    <span class="level-label">{live(move || text(|l| &l.label))}</span>
+                    <span class="leaves" class:none=live(move || leaves.with(String::is_empty))>
+                        {live(move || leaves.get())}
                     </span>
                 </span>
             </a>

@@ -1,6 +1,7 @@
 //! A table of results.
 
 use super::decimal::{Cell, aligned};
+use super::live::{live, live_view};
 use leptos::prelude::*;
 
 /// A table in a box of its own that scrolls sideways when it is too wide.
@@ -20,12 +21,12 @@ pub fn DataTable(
 ) -> impl IntoView {
     let set = Memo::new(move |_| rows.with(|rows| columns_set(rows)));
     view! {
-        <div class="table-wrap" role="region" tabindex="0" aria-label=move || caption.get()>
+        <div class="table-wrap" role="region" tabindex="0" aria-label=live(move || caption.get())>
             <table>
-                <caption>{move || caption.get()}</caption>
+                <caption>{live(move || caption.get())}</caption>
                 <thead>
                     <tr>
-                        {move || {
+                        {live_view(move || {
                             head.get()
                                 .into_iter()
                                 .enumerate()
@@ -35,18 +36,18 @@ pub fn DataTable(
                                     view! { <th scope="col" class:number=number class:long=long>{words}</th> }
                                 })
                                 .collect_view()
-                        }}
+                        })}
                     </tr>
                 </thead>
                 <tbody>
-                    {move || {
+                    {live_view(move || {
                         set.with(|s| {
                             s.rows
                                 .iter()
                                 .map(|row| view! { <tr>{row_cells(row, &s.numeric, &s.long)}</tr> })
                                 .collect_view()
                         })
-                    }}
+                    })}
                 </tbody>
             </table>
         </div>

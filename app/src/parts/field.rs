@@ -1,5 +1,6 @@
 //! What all fields share: ids, the hint and the problem below the input.
 
+use super::live::live;
 use leptos::prelude::*;
 
 /// The element id of the field for `path` in the study file, e.g. `field-feed-volume_ml` for
@@ -53,14 +54,14 @@ impl Ids {
 
 /// The hint, if there is one.
 pub(super) fn hint_line(ids: Ids, hint: String) -> impl IntoView {
-    (!hint.is_empty()).then(|| view! { <p class="hint" id=move || ids.of("hint")>{hint}</p> })
+    (!hint.is_empty()).then(|| view! { <p class="hint" id=live(move || ids.of("hint"))>{hint}</p> })
 }
 
 /// The problem; the element stays, so that a screen reader keeps track of it.
 pub(super) fn problem_line(ids: Ids, problem: Signal<Option<String>>) -> impl IntoView {
     view! {
-        <p class="problem" id=move || ids.of("problem") hidden=move || problem.with(Option::is_none)>
-            {move || problem.get().unwrap_or_default()}
+        <p class="problem" id=live(move || ids.of("problem")) hidden=live(move || problem.with(Option::is_none))>
+            {live(move || problem.get().unwrap_or_default())}
         </p>
     }
 }

@@ -1,5 +1,5 @@
 //! The parts that the sections are put together from: fields, cautions, tables, the working of a
-//! number, and the column.
+//! number, the column, and what follows the state.
 //!
 //! Fields show what was typed and report what is typed; they never parse, rewrite or keep it.
 
@@ -9,6 +9,7 @@ mod column;
 mod data_table;
 mod decimal;
 mod field;
+mod live;
 mod number_field;
 mod text_field;
 mod working;
@@ -18,6 +19,7 @@ pub use choice_field::ChoiceField;
 pub use column::{Column, ColumnLevel};
 pub use data_table::DataTable;
 pub use field::field_id;
+pub use live::{each_row, live, live_view};
 pub use number_field::NumberField;
 pub use text_field::TextField;
 pub use working::Working;

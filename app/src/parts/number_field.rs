@@ -1,6 +1,7 @@
 //! A field for a number with its unit, spread and source.
 
 use super::field::{Ids, hint_line, problem_line};
+use super::live::live;
 use crate::state::NumberText;
 use leptos::prelude::*;
 
@@ -39,35 +40,35 @@ pub fn NumberField(
     };
     let said = move || value.with(summary).unwrap_or_else(|| "± and source".to_owned());
     view! {
-        <div class="field field-number" class:has-problem=move || problem.with(Option::is_some)>
-            <label class="field-label" for=move || ids.input.get()>{label}</label>
+        <div class="field field-number" class:has-problem=live(move || problem.with(Option::is_some))>
+            <label class="field-label" for=live(move || ids.input.get())>{label}</label>
             <div class="field-line">
                 <input
                     class="input-number"
                     type="text"
                     inputmode="decimal"
                     autocomplete="off"
-                    id=move || ids.input.get()
+                    id=live(move || ids.input.get())
                     // Long numbers stay in sight; short ones keep the usual width.
-                    size=move || value.with(|v| v.value.chars().count().clamp(6, 16)).to_string()
-                    prop:value=move || value.with(|v| v.value.clone())
-                    aria-invalid=move || problem.with(|p| p.is_some().then_some("true"))
-                    aria-describedby=move || ids.described_by(problem.with(Option::is_some))
+                    size=live(move || value.with(|v| v.value.chars().count().clamp(6, 16)).to_string())
+                    prop:value=live(move || value.with(|v| v.value.clone()))
+                    aria-invalid=live(move || problem.with(|p| p.is_some().then_some("true")))
+                    aria-describedby=live(move || ids.described_by(problem.with(Option::is_some)))
                     on:input=move |ev| change(|text, typed| text.value = typed, ev)
                 />
-                {has_unit.then(|| view! { <span class="unit" id=move || ids.of("unit")>{unit}</span> })}
+                {has_unit.then(|| view! { <span class="unit" id=live(move || ids.of("unit"))>{unit}</span> })}
             </div>
             {hint_line(ids, hint)}
             {problem_line(ids, problem)}
             {with_source
                 .then(|| {
                     view! {
-                        <details class="source" class:unsaid=move || value.with(|v| summary(v).is_none())>
+                        <details class="source" class:unsaid=live(move || value.with(|v| summary(v).is_none()))>
                             <summary title=said>
                                 <span class="source-said">{said}</span>
                             </summary>
                             <div class="source-fields">
-                                <label class="field-label" for=move || ids.of("spread")>
+                                <label class="field-label" for=live(move || ids.of("spread"))>
                                     "± or range"
                                 </label>
                                 <input
@@ -75,11 +76,11 @@ pub fn NumberField(
                                     type="text"
                                     autocomplete="off"
                                     placeholder="0.2 or 4.6 to 10.2"
-                                    id=move || ids.of("spread")
-                                    prop:value=move || value.with(|v| v.spread.clone())
+                                    id=live(move || ids.of("spread"))
+                                    prop:value=live(move || value.with(|v| v.spread.clone()))
                                     on:input=move |ev| change(|text, typed| text.spread = typed, ev)
                                 />
-                                <label class="field-label" for=move || ids.of("source")>
+                                <label class="field-label" for=live(move || ids.of("source"))>
                                     "source"
                                 </label>
                                 <input
@@ -87,8 +88,8 @@ pub fn NumberField(
                                     type="text"
                                     autocomplete="off"
                                     placeholder="measured, label, reference"
-                                    id=move || ids.of("source")
-                                    prop:value=move || value.with(|v| v.source.clone())
+                                    id=live(move || ids.of("source"))
+                                    prop:value=live(move || value.with(|v| v.source.clone()))
                                     on:input=move |ev| change(|text, typed| text.source = typed, ev)
                                 />
                             </div>

@@ -1,6 +1,7 @@
 //! A field for words.
 
 use super::field::{Ids, hint_line, problem_line};
+use super::live::live;
 use leptos::prelude::*;
 
 /// A line of text: label above, what is wrong with it below.
@@ -24,16 +25,16 @@ pub fn TextField(
 ) -> impl IntoView {
     let ids = Ids::new(path, !hint.is_empty(), false);
     view! {
-        <div class="field field-text" class:has-problem=move || problem.with(Option::is_some)>
-            <label class="field-label" for=move || ids.input.get()>{label}</label>
+        <div class="field field-text" class:has-problem=live(move || problem.with(Option::is_some))>
+            <label class="field-label" for=live(move || ids.input.get())>{label}</label>
             <div class="field-line">
                 <input
                     type="text"
                     autocomplete="off"
-                    id=move || ids.input.get()
-                    prop:value=move || value.get()
-                    aria-invalid=move || problem.with(|p| p.is_some().then_some("true"))
-                    aria-describedby=move || ids.described_by(problem.with(Option::is_some))
+                    id=live(move || ids.input.get())
+                    prop:value=live(move || value.get())
+                    aria-invalid=live(move || problem.with(|p| p.is_some().then_some("true")))
+                    aria-describedby=live(move || ids.described_by(problem.with(Option::is_some)))
                     on:input=move |ev| on_change.run(event_target_value(&ev))
                 />
             </div>

@@ -1,5 +1,6 @@
 //! How a number came about.
 
+use super::live::live_view;
 use leptos::prelude::*;
 
 /// A quiet control that opens the formula with the values put in, its validity and its reference.
@@ -35,7 +36,7 @@ pub fn Working(
             <div class="working-body">
                 <p class="working-title">{title}</p>
                 <div class="formula" role="region" tabindex="0" aria-label="formula">
-                    {move || lines.get().into_iter().map(|line| view! { <p>{line}</p> }).collect_view()}
+                    {live_view(move || lines.get().into_iter().map(|line| view! { <p>{line}</p> }).collect_view())}
                 </div>
                 {small("holds", validity)}
                 {small("from", reference)}

@@ -1,7 +1,7 @@
 //! The answer: a sentence, four figures, what the reader should know, and what stops a plan.
 
 use super::bind::{of_plan, stale};
-use crate::parts::field_id;
+use crate::parts::{field_id, live, live_view};
 use crate::state::work::work;
 use crate::view_model::answer::{Figure, figures, step_of};
 use leptos::prelude::*;
@@ -16,26 +16,31 @@ pub fn AnswerPanel() -> impl IntoView {
     let none = move || sentence.with(String::is_empty);
     view! {
         <div class="answer" class:stale=old role="status">
-            <p class="stale-word" hidden=move || !old.get() || none()>
+            <p class="stale-word" hidden=live(move || !old.get() || none())>
                 "This answer is older than what is typed."
             </p>
             <p class="answer-sentence">
-                {move || {
+                {live(move || {
                     if none() {
                         "Describe the liquid on your bench: once the fields listed below are filled, the answer stands here.".to_owned()
                     } else {
-                        sentence.get()
+                        unbroken(&sentence.get())
                     }
-                }}
+                })}
             </p>
-            <p class="answer-detail" hidden=move || detail.with(String::is_empty)>{move || detail.get()}</p>
+            <p class="answer-detail" hidden=live(move || detail.with(String::is_empty))>{live(move || unbroken(&detail.get()))}</p>
             <div class="figures">
-                {move || shown.get().into_iter().map(figure).collect_view()}
+                {live_view(move || shown.get().into_iter().map(figure).collect_view())}
             </div>
         </div>
         <Problems/>
         <Notices/>
     }
+}
+
+/// Keeps a number and its percent sign in one line.
+fn unbroken(text: &str) -> String {
+    text.replace(" %", "\u{a0}%")
 }
 
 fn figure(f: Figure) -> impl IntoView {
@@ -57,15 +62,15 @@ fn Problems() -> impl IntoView {
     let problems = work().problems;
     let count = move || problems.with(Vec::len);
     view! {
-        <details class="problems" hidden=move || count() == 0 open=move || count() <= 3>
+        <details class="problems" hidden=live(move || count() == 0) open=live(move || count() <= 3)>
             <summary>
-                {move || match count() {
+                {live(move || match count() {
                     1 => "1 field stops the plan".to_owned(),
                     n => format!("{n} fields stop the plan"),
-                }}
+                })}
             </summary>
             <ul>
-                {move || {
+                {live_view(move || {
                     problems
                         .get()
                         .into_iter()
@@ -81,7 +86,7 @@ fn Problems() -> impl IntoView {
                             }
                         })
                         .collect_view()
-                }}
+                })}
             </ul>
         </details>
     }
@@ -103,8 +108,8 @@ fn go_to(event: &web_sys::MouseEvent, field: &str) {
 fn Notices() -> impl IntoView {
     let notices = of_plan(|g| g.notices.clone());
     view! {
-        <ul class="notices" hidden=move || notices.with(Vec::is_empty)>
-            {move || {
+        <ul class="notices" hidden=live(move || notices.with(Vec::is_empty))>
+            {live_view(move || {
                 notices
                     .get()
                     .into_iter()
@@ -119,7 +124,7 @@ fn Notices() -> impl IntoView {
                         }
                     })
                     .collect_view()
-            }}
+            })}
         </ul>
     }
 }

@@ -2,7 +2,7 @@
 
 use super::bind::of_plan;
 use super::step::{Results, Step};
-use crate::parts::{DataTable, Working};
+use crate::parts::{DataTable, Working, live};
 use crate::view_model::balance::{balance_head, balance_line, balance_rows, contributions_head, contributions_rows};
 use leptos::prelude::*;
 
@@ -25,7 +25,7 @@ pub fn BalanceStep() -> impl IntoView {
                     reference="conservation of mass"
                     validity="planned streams; nothing reacts or evaporates but water and solvent"
                 />
-                <div hidden=move || contributions.with(Vec::is_empty)>
+                <div hidden=live(move || contributions.with(Vec::is_empty))>
                     <DataTable
                         caption=Signal::stored("What the doubt about the planned removal is made of".to_owned())
                         head=Signal::stored(contributions_head())

@@ -2,7 +2,7 @@
 
 use super::bind::{choice, fixed_number, hinted, number, of_draft, of_plan, words};
 use super::step::Results;
-use crate::parts::Working;
+use crate::parts::{Working, live};
 use crate::state::draft::ConcentrateBy;
 use crate::view_model::feed::{liquor_line, liquor_working};
 use leptos::prelude::*;
@@ -31,8 +31,8 @@ pub fn ConcentrateFields() -> impl IntoView {
                     |d| Some(d.concentrate.by),
                     |d, by| d.concentrate.by = by,
                 )}
-                <div class="when" hidden=move || !changes.get()>
-                    {move || {
+                <div class="when" hidden=live(move || !changes.get())>
+                    {live(move || {
                         let (label, unit, last) = match by.get() {
                             ConcentrateBy::WaterRemovedG => ("water taken off", "g", "water_removed_g"),
                             ConcentrateBy::Brix => ("soluble solids to reach", "°Bx", "brix"),
@@ -44,9 +44,9 @@ pub fn ConcentrateFields() -> impl IntoView {
                             |d| Some(&d.concentrate.to),
                             |d| Some(&mut d.concentrate.to),
                         )
-                    }}
+                    })}
                 </div>
-                <div class="when" hidden=move || !changes.get()>
+                <div class="when" hidden=live(move || !changes.get())>
                     {fixed_number(
                         hinted("pH afterwards", "", "measure it; the feed's is used while this is empty"),
                         "concentrate.ph_after",
@@ -56,7 +56,7 @@ pub fn ConcentrateFields() -> impl IntoView {
                 </div>
             </div>
             <Results there=Signal::derive(move || line.with(|l| !l.is_empty()))>
-                <p>"Liquor: " {move || line.get()}</p>
+                <p>"Liquor: " {live(move || line.get())}</p>
                 <Working
                     title="the liquor"
                     lines=of_plan(|g| liquor_working(&g.study, &g.plan.liquor))

@@ -4,6 +4,7 @@ use super::bind::{button, choice_of, fixed_number, hinted, of_draft, of_plan, wo
 use super::concentrate::ConcentrateFields;
 use super::ingredient::IngredientFields;
 use super::step::{Cautions, Step};
+use crate::parts::each_row;
 use crate::state::work::work;
 use crate::view_model::feed::feed_line;
 use crate::view_model::solvent::general_cautions_at;
@@ -52,9 +53,7 @@ pub fn Feed() -> impl IntoView {
                 )}
             </div>
             <h3>"Ingredients"</h3>
-            <For each=move || ids.get() key=|id| *id let:id>
-                <IngredientFields id/>
-            </For>
+            {each_row(ids, |id| view! { <IngredientFields id/> })}
             <div class="buttons">
                 {button("Add an ingredient", "", move || w.draft.update(|d| { d.add_ingredient(); }))}
             </div>

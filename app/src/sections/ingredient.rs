@@ -1,6 +1,7 @@
 //! One ingredient of the feed.
 
 use super::bind::{Words, button, choice, number, of_draft, text, words};
+use crate::parts::{live, live_view};
 use crate::state::draft::{AmountAs, RowId};
 use crate::state::work::work;
 use crate::view_model::solvent::known_solute;
@@ -40,8 +41,8 @@ pub fn IngredientFields(
     view! {
         <div class="row ingredient" class:target=is_target>
             <div class="row-head">
-                <strong>{move || name.get()}</strong>
-                <span class="role">{move || if is_target.get() { "target" } else { "company" }}</span>
+                <strong>{live(move || name.get())}</strong>
+                <span class="role">{live(move || if is_target.get() { "target" } else { "company" })}</span>
                 {button("Remove this ingredient", "quiet", move || w.draft.update(|d| d.remove_ingredient(id)))}
             </div>
             <div class="fields">
@@ -62,15 +63,15 @@ pub fn IngredientFields(
                         }
                     },
                 )}
-                {move || {
+                {live_view(move || {
                     number(
                         words("amount", unit.get()),
                         amount_path,
                         move |d| d.ingredient(id).map(|i| &i.amount),
                         move |d| d.ingredient_mut(id).map(|i| &mut i.amount),
                     )
-                }}
-                <div class="when" hidden=move || !per_serving.get()>
+                })}
+                <div class="when" hidden=live(move || !per_serving.get())>
                     {number(
                         words("serving", "mL"),
                         move |d| at(d, "amount.per_serving.serving_ml"),

@@ -4,7 +4,7 @@ use super::bind::{Words, button, choice, number, of_draft, of_plan, text, words}
 use super::readings::Readings;
 use super::step::{Cautions, Results, Step};
 use crate::charts::{LogDChart, SpeciesChart};
-use crate::parts::{DataTable, Working};
+use crate::parts::{DataTable, Working, each_row, live};
 use crate::state::draft::{RowId, SiteDraft};
 use crate::state::work::work;
 use crate::state::{Draft, NumberText};
@@ -45,9 +45,7 @@ pub fn Ionisation() -> impl IntoView {
             <p class="quiet">
                 "Macroscopic constants in rising order. A base is given by the pKa of its conjugate acid; an ingredient without sites does not ionise."
             </p>
-            <For each=move || ids.get() key=|id| *id let:id>
-                <Sites id/>
-            </For>
+            {each_row(ids, |id| view! { <Sites id/> })}
             <Results there=there>
                 <DataTable
                     caption=Signal::stored("Each ingredient in the liquor".to_owned())
@@ -83,12 +81,10 @@ fn Sites(
     view! {
         <div class="row">
             <div class="row-head">
-                <strong>{move || name.get()}</strong>
-                <span class="quiet" hidden=move || sites.with(|s| !s.is_empty())>"no site stated"</span>
+                <strong>{live(move || name.get())}</strong>
+                <span class="quiet" hidden=live(move || sites.with(|s| !s.is_empty()))>"no site stated"</span>
             </div>
-            <For each=move || sites.get() key=|s| *s let:site>
-                <SiteFields id site/>
-            </For>
+            {each_row(sites, move |site| view! { <SiteFields id site/> })}
             <div class="buttons">
                 {button("Add a site", "quiet", move || w.draft.update(|d| d.add_site(id)))}
                 <SitesFromLibrary id/>

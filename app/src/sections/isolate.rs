@@ -2,9 +2,9 @@
 
 use super::bind::{fixed_number, hinted, of_draft, of_plan, words};
 use super::step::{Cautions, Results, Step};
-use crate::parts::{DataTable, Working};
+use crate::parts::{DataTable, Working, live};
 use crate::state::work::work;
-use crate::view_model::isolate::{anhydrous_working, comparison_head, comparison_rows};
+use crate::view_model::isolate::{anhydrous_working, comparison_head, comparison_rows, isolate_in_a_line};
 use crate::view_model::solvent::cautions_at;
 use leptos::prelude::*;
 use unstir_core::library::cautions::CautionStep;
@@ -14,7 +14,7 @@ use unstir_core::library::cautions::CautionStep;
 pub fn IsolateStep() -> impl IntoView {
     let w = work();
     let weighed = of_draft(|d| d.isolate.weighed);
-    let sum = of_plan(|g| g.plan.isolate.as_ref().map(|i| i.sentence.clone()).unwrap_or_default());
+    let sum = of_plan(|g| isolate_in_a_line(&g.plan));
     let solvent = of_draft(|d| d.solvent.id.clone());
     let cautions = Memo::new(move |_| solvent.with(|s| cautions_at(&[CautionStep::Isolate], s)));
     view! {
@@ -27,7 +27,7 @@ pub fn IsolateStep() -> impl IntoView {
                 />
                 "the extract has been evaporated and its residue weighed"
             </label>
-            <div class="fields" hidden=move || !weighed.get()>
+            <div class="fields" hidden=live(move || !weighed.get())>
                 {fixed_number(
                     words("crude mass", "mg"),
                     "isolate.crude_mass_mg",

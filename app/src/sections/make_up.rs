@@ -2,7 +2,7 @@
 
 use super::bind::{button, choice, fixed_number, hinted, number, of_draft, of_plan, text, words};
 use super::step::{Cautions, Results, Step};
-use crate::parts::{DataTable, Working};
+use crate::parts::{DataTable, Working, each_row, live, live_view};
 use crate::state::Draft;
 use crate::state::draft::{LossAs, LossDraft, RowId};
 use crate::state::work::work;
@@ -35,9 +35,7 @@ pub fn MakeUpStep() -> impl IntoView {
             <p class="quiet">
                 "Strip the dissolved solvent before making up. What may be done with the liquid afterwards, local rules and licensed practice decide; nothing here says that it may be consumed."
             </p>
-            <For each=move || losses.get() key=|id| *id let:id>
-                <LossFields id/>
-            </For>
+            {each_row(losses, |id| view! { <LossFields id/> })}
             <div class="buttons">
                 {button("Add a loss", "", move || w.draft.update(Draft::add_loss))}
             </div>
@@ -50,7 +48,7 @@ pub fn MakeUpStep() -> impl IntoView {
                 )}
             </div>
             <Results there=Signal::derive(move || advice.with(|a| !a.is_empty()))>
-                <p class="advice">{move || advice.get()}</p>
+                <p class="advice">{live(move || advice.get())}</p>
                 <Working
                     title="the make-up volume"
                     lines=of_plan(|g| volume_working(&g.study, &g.plan))
@@ -105,7 +103,7 @@ fn LossFields(
     view! {
         <div class="row loss">
             <div class="row-head">
-                <strong>{move || place.get()}</strong>
+                <strong>{live(move || place.get())}</strong>
                 {button("Remove this loss", "quiet", move || w.draft.update(|d| d.losses.retain(|l| l.id != id)))}
             </div>
             <div class="fields">
@@ -137,14 +135,14 @@ fn LossFields(
                         }
                     },
                 )}
-                {move || {
+                {live_view(move || {
                     number(
                         words("how much", unit.get()),
                         amount_path,
                         move |d| loss(d, id).map(|l| &l.amount),
                         move |d| loss_mut(d, id).map(|l| &mut l.amount),
                     )
-                }}
+                })}
             </div>
         </div>
     }

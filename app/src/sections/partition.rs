@@ -1,6 +1,7 @@
 //! Partition coefficients of every ingredient in the solvent in use.
 
 use super::bind::{Words, button, number, of_draft, text};
+use crate::parts::{each_row, live, live_view};
 use crate::state::draft::{Draft, RowId};
 use crate::state::work::work;
 use crate::view_model::solvent::{PublishedRow, published_rows};
@@ -14,18 +15,16 @@ pub fn PartitionFields() -> impl IntoView {
     let ids = of_draft(|d| d.ingredients.iter().map(|i| i.id).collect::<Vec<_>>());
     let others = of_draft(Draft::other_partition_rows);
     view! {
-        <div hidden=move || !chosen.get().0>
-            <h3>{move || format!("Partition into {}", chosen.get().1)}</h3>
+        <div hidden=live(move || !chosen.get().0)>
+            <h3>{live(move || format!("Partition into {}", chosen.get().1))}</h3>
             <p class="quiet">
                 "K: concentration in the solvent over concentration in water, neutral form only. An ingredient of the company without K is taken to stay in the liquor."
             </p>
-            <For each=move || ids.get() key=|id| *id let:id>
-                <KFields id/>
-            </For>
-            <details class="quiet" hidden=move || others.with(Vec::is_empty)>
-                <summary>{move || format!("K kept for other solvents ({})", others.with(Vec::len))}</summary>
+            {each_row(ids, |id| view! { <KFields id/> })}
+            <details class="quiet" hidden=live(move || others.with(Vec::is_empty))>
+                <summary>{live(move || format!("K kept for other solvents ({})", others.with(Vec::len)))}</summary>
                 <ul>
-                    <For each=move || others.get() key=|o| o.clone() let:other>
+                    {live_view(move || others.get().into_iter().map(|other| view! {
                         <li class="pick-row">
                             <span>{other.1.clone()}</span>
                             {button(
@@ -34,7 +33,7 @@ pub fn PartitionFields() -> impl IntoView {
                                 move || w.draft.update(|d| d.partition.retain(|p| p.id != other.0)),
                             )}
                         </li>
-                    </For>
+                    }).collect_view())}
                 </ul>
             </details>
         </div>
@@ -67,7 +66,7 @@ fn KFields(
     view! {
         <div class="row" class:target=is_target>
             <div class="row-head">
-                <strong>{move || name.get()}</strong>
+                <strong>{live(move || name.get())}</strong>
             </div>
             <div class="fields">
                 {number(
@@ -125,9 +124,9 @@ fn PublishedK(
         }
     };
     view! {
-        <div class="pick" hidden=move || list.with(Vec::is_empty)>
+        <div class="pick" hidden=live(move || list.with(Vec::is_empty))>
             <p class="quiet">"Published for this pair:"</p>
-            <ul>{move || list.get().into_iter().map(row).collect_view()}</ul>
+            <ul>{live_view(move || list.get().into_iter().map(row).collect_view())}</ul>
         </div>
     }
 }

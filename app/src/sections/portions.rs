@@ -3,7 +3,7 @@
 use super::bind::{button, choice, choice_of, fixed_number, hinted, number, of_draft, of_plan, text, words};
 use super::step::{Cautions, Results, Step};
 use crate::charts::RemovalChart;
-use crate::parts::{DataTable, Working};
+use crate::parts::{DataTable, Working, each_row, live};
 use crate::state::draft::{Draft, EnteringDraft, PortionDraft, RowId, SchemeKind};
 use crate::state::work::work;
 use crate::view_model::format::{measured, measured_percent};
@@ -77,12 +77,12 @@ fn SchemeFields() -> impl IntoView {
                 |d, scheme| d.extraction.scheme = scheme,
             )}
             {fixed_number(
-                hinted("stage efficiency E", "", "1 is full equilibrium; less for short or gentle mixing"),
+                hinted("stage efficiency E", "", "1 is full equilibrium; less for short or gentle mixing; a portion may have its own"),
                 "extraction.stage_efficiency",
                 |d| &d.extraction.efficiency,
                 |d| &mut d.extraction.efficiency,
             )}
-            <div class="when" hidden=move || scheme.get() != SchemeKind::CounterCurrent>
+            <div class="when" hidden=live(move || scheme.get() != SchemeKind::CounterCurrent)>
                 {text(
                     words("number of stages", ""),
                     |_| "extraction.stages".to_owned(),
@@ -90,7 +90,7 @@ fn SchemeFields() -> impl IntoView {
                     |d| Some(&mut d.extraction.stages),
                 )}
             </div>
-            <div class="when" hidden=move || scheme.get() == SchemeKind::CrossCurrent>
+            <div class="when" hidden=live(move || scheme.get() == SchemeKind::CrossCurrent)>
                 {fixed_number(
                     words("solvent in all", "mL"),
                     "extraction.solvent_ml",
@@ -99,10 +99,8 @@ fn SchemeFields() -> impl IntoView {
                 )}
             </div>
         </div>
-        <div class="when" hidden=move || scheme.get() != SchemeKind::CrossCurrent>
-            <For each=move || portions.get() key=|id| *id let:id>
-                <PortionFields id/>
-            </For>
+        <div class="when" hidden=live(move || scheme.get() != SchemeKind::CrossCurrent)>
+            {each_row(portions, |id| view! { <PortionFields id/> })}
             <div class="buttons">
                 {button("Add a portion", "", move || w.draft.update(Draft::add_portion))}
             </div>
@@ -115,7 +113,7 @@ fn SchemeFields() -> impl IntoView {
 #[component]
 fn PortionsProblem() -> impl IntoView {
     let problem = work().problem_at(Signal::stored("extraction.portions".to_owned()));
-    view! { <p class="problem" hidden=move || problem.with(Option::is_none)>{move || problem.get()}</p> }
+    view! { <p class="problem" hidden=live(move || problem.with(Option::is_none))>{live(move || problem.get().unwrap_or_default())}</p> }
 }
 
 fn portion(d: &Draft, id: RowId) -> Option<&PortionDraft> {
@@ -141,7 +139,7 @@ fn PortionFields(
     view! {
         <div class="row portion">
             <div class="row-head">
-                <strong>{move || place.get()}</strong>
+                <strong>{live(move || place.get())}</strong>
                 {button(
                     "Remove this portion",
                     "quiet",
@@ -156,7 +154,7 @@ fn PortionFields(
                     move |d| portion_mut(d, id).map(|p| &mut p.volume),
                 )}
                 {number(
-                    hinted("E of this portion", "", "leave empty for the same as the rest"),
+                    words("its own E", ""),
                     move |d| format!("extraction.portions[{}].stage_efficiency", portion_index(d, id)),
                     move |d| portion(d, id).map(|p| &p.efficiency),
                     move |d| portion_mut(d, id).map(|p| &mut p.efficiency),
@@ -192,11 +190,9 @@ fn DrainingFields() -> impl IntoView {
                 |d| &mut d.extraction.vessel,
             )}
         </div>
-        <details class="quiet" open=move || entering.with_untracked(|e| !e.is_empty())>
+        <details class="quiet" open=live(move || entering.with_untracked(|e| !e.is_empty()))>
             <summary>"solvent that is not fresh (recycled or loaded)"</summary>
-            <For each=move || entering.get() key=|id| *id let:id>
-                <EnteringFields id/>
-            </For>
+            {each_row(entering, |id| view! { <EnteringFields id/> })}
             <div class="buttons">
                 {button("Add an ingredient of the entering solvent", "quiet", move || w.draft.update(Draft::add_entering))}
             </div>

@@ -2,7 +2,7 @@
 
 use super::bind::{button, choice, number, of_draft, of_plan, words};
 use super::step::Results;
-use crate::parts::{DataTable, Working};
+use crate::parts::{DataTable, Working, each_row, live, live_view};
 use crate::state::draft::{ReadingDraft, RowId};
 use crate::state::work::work;
 use crate::state::{Draft, NumberText};
@@ -35,16 +35,14 @@ pub fn Readings(
     let add = move || w.draft.update(|d| d.add_reading(id, NumberText::default(), MeantAs::Unstated));
     view! {
         <div class="readings">
-            <h3 hidden=move || !disputed.get()>"Disputed constant"</h3>
-            <For each=move || rows.get() key=|r| *r let:reading>
-                <ReadingFields id reading/>
-            </For>
+            <h3 hidden=live(move || !disputed.get())>"Disputed constant"</h3>
+            {each_row(rows, move |reading| view! { <ReadingFields id reading/> })}
             <div class="buttons">
                 {button("Add a published reading", "quiet", add)}
             </div>
             <Published id/>
             <Results there=there>
-                <p class="verdict-sentence">{move || sentence.get()}</p>
+                <p class="verdict-sentence">{live(move || sentence.get())}</p>
                 <DataTable
                     caption=Signal::stored("What each reading would mean".to_owned())
                     head=Signal::stored(readings_head())
@@ -170,11 +168,11 @@ fn Published(
         }
     };
     view! {
-        <details class="pick quiet" hidden=move || list.with(Vec::is_empty)>
+        <details class="pick quiet" hidden=live(move || list.with(Vec::is_empty))>
             <summary>
-                {move || format!("Published readings for {} ({})", solute.with(|s| s.1.clone()), list.with(Vec::len))}
+                {live(move || format!("Published readings for {} ({})", solute.with(|s| s.1.clone()), list.with(Vec::len)))}
             </summary>
-            <ul>{move || list.get().into_iter().map(row).collect_view()}</ul>
+            <ul>{live_view(move || list.get().into_iter().map(row).collect_view())}</ul>
         </details>
     }
 }

@@ -2,9 +2,11 @@
 
 use super::bind::{button, of_draft};
 use crate::browser::files;
+use crate::parts::{live, live_view};
 use crate::state::demos::DEMOS;
 use crate::state::draft::Draft;
 use crate::state::file_text::{draft_of, file_of};
+use crate::state::shelf::ShelfEntry;
 use crate::state::work::{Saved, Work, work};
 use leptos::html::Input;
 use leptos::prelude::*;
@@ -30,7 +32,7 @@ pub fn Shelf() -> impl IntoView {
                 class="study-name"
                 type="text"
                 autocomplete="off"
-                prop:value=move || name.get()
+                prop:value=live(move || name.get())
                 on:input=move |e| w.draft.update(|d| d.name = event_target_value(&e))
             />
             <span class="saved">{saved}</span>
@@ -44,7 +46,7 @@ pub fn Shelf() -> impl IntoView {
         <div class="top-tools">
             <ShelfList/>
             <Note/>
-            <p class="invite" hidden=move || !demo.get()>
+            <p class="invite" hidden=live(move || !demo.get())>
                 "A demo study with an invented scenario. "
                 {button("Describe the liquid on your bench", "main", move || w.begin(Draft::blank()))}
             </p>
@@ -125,8 +127,8 @@ fn Told() -> impl IntoView {
     };
     view! {
         <div class="told" role="status">
-            {move || not_kept().map(|words| view! { <p class="notice">{words}</p> })}
-            {move || w.message.get().map(|words| view! { <p class="notice">{words}</p> })}
+            {live_view(move || not_kept().map(|words| view! { <p class="notice">{words}</p> }))}
+            {live_view(move || w.message.get().map(|words| view! { <p class="notice">{words}</p> }))}
             {removed}
             {other_tab}
         </div>
@@ -146,17 +148,21 @@ fn ShelfList() -> impl IntoView {
         };
         button(format!("Demo: {}", demo.title), "", open)
     });
+    let entry = move |e: ShelfEntry| {
+        let open_now = w.id.get() == e.id;
+        view! {
+            <li class="shelf-row" class:current=open_now>
+                {button(e.name, "quiet", move || w.open(e.id))}
+                <span class="quiet" hidden=!open_now>"open now"</span>
+            </li>
+        }
+    };
     let confirm_free = move || w.remove();
     view! {
         <details class="shelf">
-            <summary>{move || format!("Studies ({})", count())}</summary>
+            <summary>{live(move || format!("Studies ({})", count()))}</summary>
             <ul class="shelf-list">
-                <For each=move || w.shelf.get() key=|e| (e.id, e.name.clone()) let:entry>
-                    <li class="shelf-row" class:current=move || w.id.get() == entry.id>
-                        {button(entry.name.clone(), "quiet", move || w.open(entry.id))}
-                        <span class="quiet" hidden=move || w.id.get() != entry.id>"open now"</span>
-                    </li>
-                </For>
+                {live_view(move || w.shelf.get().into_iter().map(entry).collect_view())}
             </ul>
             <div class="buttons">
                 {button("New study", "", move || w.begin(Draft::blank()))}
@@ -180,7 +186,7 @@ fn Note() -> impl IntoView {
             <textarea
                 id="study-note"
                 rows="3"
-                prop:value=move || note.get()
+                prop:value=live(move || note.get())
                 on:input=move |e| w.draft.update(|d| d.note = event_target_value(&e))
             ></textarea>
         </details>

@@ -3,7 +3,7 @@
 use super::bind::{button, hinted, number, of_draft, of_plan, text, words};
 use super::partition::PartitionFields;
 use super::step::{Cautions, Step};
-use crate::parts::CautionBox;
+use crate::parts::{CautionBox, live, live_view};
 use crate::state::NumberText;
 use crate::state::work::work;
 use crate::view_model::solvent::{Fact, SolventRow, cautions_at, solvent_rows};
@@ -39,7 +39,7 @@ pub fn SolventStep() -> impl IntoView {
             <PartitionFields/>
             <h3>"Solvents of the library"</h3>
             <div class="choices">
-                {move || solvent_rows(density.get()).into_iter().map(|row| view! { <Choice row/> }).collect_view()}
+                {live_view(move || solvent_rows(density.get()).into_iter().map(|row| view! { <Choice row/> }).collect_view())}
             </div>
         </Step>
     }
@@ -73,7 +73,7 @@ fn OwnSolvent() -> impl IntoView {
             )}
             {button("Use a solvent of your own", "quiet", take_own)}
         </div>
-        <p class="notice" hidden=move || !own.get()>
+        <p class="notice" hidden=live(move || !own.get())>
             "The library holds nothing about this solvent: find its hazards, limits and layer in its safety data sheet before opening it."
         </p>
     }
@@ -90,7 +90,10 @@ fn Choice(
     let chosen = of_draft(move |d| d.solvent.id == id);
     let (id, name, density) = (row.id.clone(), row.name.clone(), row.density.clone());
     let choose = move || w.draft.update(|d| d.choose_solvent(&id, &name, density.clone()));
-    let sources = row.facts.clone().into_iter().map(|f| view! { <li>{format!("{}: {}", f.what, f.source)}</li> });
+    let of_facts = row.facts.iter().map(|f| format!("{}: {}", f.what, f.source));
+    let of_cautions = row.cautions.iter().map(|c| format!("{}: {}", c.what_can_happen, c.source));
+    let sources: Vec<String> = of_facts.chain(of_cautions).collect();
+    let sources = sources.into_iter().map(|words| view! { <li>{words}</li> });
     let (long, short): (Vec<Fact>, Vec<Fact>) = row.facts.into_iter().partition(|f| f.value.len() > LONGEST_FACT);
     let short = short.into_iter().map(|f| {
         view! {
@@ -108,8 +111,8 @@ fn Choice(
         <div class="row choice" class:chosen=chosen>
             <div class="row-head">
                 <strong>{row.name}</strong>
-                <span class="role" hidden=move || !chosen.get()>"in use"</span>
-                <span hidden=move || chosen.get()>{button("Use this solvent", "", choose)}</span>
+                <span class="role" hidden=live(move || !chosen.get())>"in use"</span>
+                <span hidden=live(move || chosen.get())>{button("Use this solvent", "", choose)}</span>
             </div>
             <dl class="facts">{short.collect_view()}</dl>
             {long.collect_view()}

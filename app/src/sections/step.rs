@@ -1,7 +1,7 @@
 //! The frame of one step.
 
 use super::bind::stale;
-use crate::parts::{CautionBox, CautionText};
+use crate::parts::{CautionBox, CautionText, live, live_view};
 use leptos::prelude::*;
 
 /// A step of the flow: its name, its result in a line, and what belongs to it.
@@ -20,8 +20,8 @@ pub fn Step(
     view! {
         <section class="step" id=id aria-labelledby=format!("{id}-name")>
             <h2 id=format!("{id}-name")>{name}</h2>
-            <p class="step-sum" class:stale=old hidden=move || sum.with(String::is_empty)>
-                {move || sum.get()}
+            <p class="step-sum" class:stale=old hidden=live(move || sum.with(String::is_empty))>
+                {live(move || sum.get())}
             </p>
             {children()}
         </section>
@@ -39,8 +39,8 @@ pub fn Results(
 ) -> impl IntoView {
     let old = stale();
     view! {
-        <div class="results" class:stale=old hidden=move || !there.get()>
-            <p class="stale-word" hidden=move || !old.get()>
+        <div class="results" class:stale=old hidden=live(move || !there.get())>
+            <p class="stale-word" hidden=live(move || !old.get())>
                 "These results are older than what is typed: correct the fields marked above."
             </p>
             {children()}
@@ -57,7 +57,7 @@ pub fn Cautions(
 ) -> impl IntoView {
     view! {
         <div class="cautions">
-            {move || list.get().into_iter().map(|caution| view! { <CautionBox caution/> }).collect_view()}
+            {live_view(move || list.get().into_iter().map(|caution| view! { <CautionBox caution/> }).collect_view())}
         </div>
     }
 }

@@ -62,7 +62,7 @@ pub fn figures(plan: &Plan) -> [Figure; 4] {
                 .unwrap_or_default(),
         },
         Figure {
-            label: "balance does not close by".into(),
+            label: "balance closes to".into(),
             value: significant(h.balance_residual.value, 2),
             interval: String::new(),
             note: "largest of any ingredient, relative".into(),

@@ -4,6 +4,16 @@ use super::format::{measured, measured_percent, percent, significant, stated};
 use unstir_core::plan::Plan;
 use unstir_core::study::Study;
 
+/// What the isolate amounts to, in a line; empty while nothing has been weighed.
+pub fn isolate_in_a_line(plan: &Plan) -> String {
+    let Some(i) = &plan.isolate else { return String::new() };
+    format!(
+        "{} anhydrous, {} of what was charged",
+        measured(&i.anhydrous_mg).value,
+        measured_percent(&i.found_removal).value
+    )
+}
+
 /// Head of the comparison.
 pub fn comparison_head() -> Vec<String> {
     ["", "by the plan", "by the isolate"].map(str::to_owned).to_vec()
@@ -73,6 +83,8 @@ mod tests {
         assert_eq!(rows.len(), 5);
         assert!(rows[1][2].starts_with("38.7") || rows[1][2].starts_with("39"), "{rows:?}");
         assert_eq!(anhydrous_working(&g.study, &g.plan).len(), 3);
+        // 47 mg, 90 % pure, monohydrate: 47·0.9·194.19/(194.19 + 18.015) = 38.71 mg of 160 mg.
+        assert_eq!(isolate_in_a_line(&g.plan), "38.7 mg anhydrous, 24.2 % of what was charged");
         assert!(comparison_rows(&good(1).plan).is_empty());
     }
 }

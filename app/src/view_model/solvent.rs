@@ -108,7 +108,8 @@ fn limit_facts(l: &ExposureLimits) -> Vec<Fact> {
     let mut list = Vec::new();
     let mut add = |what: &str, parts: Vec<String>, source: &Source| {
         if !parts.is_empty() {
-            list.push(Fact { what: what.to_owned(), value: parts.join(", "), source: cite(source) });
+            let value = parts.join(", ").replace("mg/m3", "mg/m³");
+            list.push(Fact { what: what.to_owned(), value, source: cite(source) });
         }
     };
     let ppm = |value: Option<f64>, words: &str| value.map(|v| format!("{v} ppm {words}"));

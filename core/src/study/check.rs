@@ -134,7 +134,8 @@ pub fn words_of(study: &Study, path: &str) -> String {
         return format!("{what} of {}", p.ingredient);
     }
     if let Some(i) = index("extraction.portions[") {
-        return format!("{what} {}", i + 1);
+        let portion = format!("portion {}", i + 1);
+        return if path.ends_with("volume_ml") { portion } else { format!("{what} of {portion}") };
     }
     if let Some(l) = index("losses[").and_then(|i| study.losses.get(i)) {
         return format!("{what} as “{}”", l.what);
@@ -153,7 +154,8 @@ fn refusal(a: &Allowed, value: f64) -> String {
     let unit = if a.unit.is_empty() { String::new() } else { format!(" {}", a.unit) };
     let from = if a.with_low { "from" } else { "more than" };
     let to = if a.with_low { "to" } else { "up to" };
-    format!("{} is {value}{unit}; it can be {from} {} {to} {}{unit}. Try: {}", a.what, a.low, a.high, a.advice)
+    let range = format!("{value}{unit}; it can be {from} {} {to} {}{unit}", a.low, a.high).replace('-', "−");
+    format!("{} is {range}. Try: {}", a.what, a.advice)
 }
 
 fn each_number(study: &Study, say: &mut dyn FnMut(&str, String)) {
@@ -342,7 +344,9 @@ fn partition(study: &Study, say: &mut dyn FnMut(&str, String)) {
             );
         }
     }
-    if let Some(t) = study.target() {
+    if study.solvent.id.is_empty() {
+        say("solvent.name", "no solvent is chosen; pick one below, or type the name of your own".to_owned());
+    } else if let Some(t) = study.target() {
         match study.partition.iter().position(|p| p.ingredient == t.name && p.solvent == study.solvent.id) {
             None => say(
                 "partition",

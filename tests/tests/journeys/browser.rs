@@ -198,7 +198,8 @@ impl Page {
     /// The text of the first element that matches.
     pub async fn text(&self, css: &str) -> WebDriverResult<String> {
         // What is folded away still counts.
-        Ok(self.wait_for(css).await?.prop("textContent").await?.unwrap_or_default())
+        let text = self.wait_for(css).await?.prop("textContent").await?.unwrap_or_default();
+        Ok(text.replace('\u{a0}', " "))
     }
 
     /// How many elements match.
