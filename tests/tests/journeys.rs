@@ -20,7 +20,7 @@ async fn describe_own_liquid(page: &Page) -> WebDriverResult<()> {
     page.type_at("feed.volume_ml", "50").await?;
     page.type_at("feed.ph", "7").await?;
     page.type_at("feed.ingredients[0].name", "bitter stuff").await?;
-    page.type_at("feed.ingredients[0].amount.mass_mg", "10").await?;
+    page.type_at("feed.ingredients[0].amount.mg_per_l", "200").await?;
     page.press("Use a solvent of your own").await?;
     // Where nothing is typed the path is that of the missing K; then it gets its own.
     page.type_at("partition", "5").await?;
@@ -65,13 +65,13 @@ fn the_demo_of_a_neutral_alkaloid_shows_plan_and_isolate_side_by_side() {
 #[test]
 fn each_demo_teaches_its_own_lesson() {
     journey(Setup::default(), |page| async move {
-        page.press("Demo: Bitter base in a sour tonic").await?;
+        page.press("Demo: Base charged at the liquid's own pH").await?;
         let said = page.text(".answer").await?;
         assert!(said.contains("Ionisation is the limit") && said.contains("sodium"), "{said}");
-        page.press("Demo: Preservative acid in a berry cordial").await?;
+        page.press("Demo: Weak-acid preservative near its pKa").await?;
         let said = answer(&page).await?;
         assert!(said.contains("borderline"), "{said}");
-        page.press("Demo: Neutral alkaloid in an acidic sweet drink").await?;
+        page.press("Demo: Neutral alkaloid, crude isolate far below plan").await?;
         assert!(answer(&page).await?.contains("24 %"));
         Ok(())
     });
@@ -98,13 +98,13 @@ fn bad_input_keeps_the_text_and_the_last_good_answer() {
             ("isolate.purity", "90", "fraction"),
         ] {
             let before = page.typed(path).await?;
-            page.type_at(path, text).await?;
+            page.paste_at(path, text).await?;
             let problem = page.problem(path).await?;
             assert!(problem.to_lowercase().contains(&word.to_lowercase()), "{path} “{text}”: {problem}");
             assert_eq!(page.typed(path).await?, text, "{path}: typed text was changed");
             assert_eq!(answer(&page).await?, good, "{path} “{text}”: the last good answer is gone");
             assert!(page.count(".answer.stale").await? == 1, "{path} “{text}”: not marked stale");
-            page.type_at(path, &before).await?;
+            page.paste_at(path, &before).await?;
             assert_eq!(page.problem(path).await?, "", "{path}");
             assert_eq!(page.count(".answer.stale").await?, 0, "{path}: still stale");
         }
@@ -192,7 +192,7 @@ fn portions_and_ingredients_come_and_go() {
         assert_eq!(page.count("#portions .row").await?, rows + 1);
         page.press("Add an ingredient").await?;
         page.type_at("feed.ingredients[3].name", "aroma").await?;
-        page.type_at("feed.ingredients[3].amount.mass_mg", "5").await?;
+        page.type_at("feed.ingredients[3].amount.mg_per_l", "5").await?;
         let balance = page.text("#balance").await?;
         assert!(balance.contains("aroma"), "{balance}");
         page.press("Remove this portion").await?;
@@ -245,9 +245,9 @@ fn it_fits_every_screen() {
             assert!(wide.as_f64().unwrap_or(1.0) <= 1.0, "{size:?}: {wide} px too wide");
             let small = page
                 .ask(
-                    "return [...document.querySelectorAll('button, input:not([type=radio]):not([type=file]), select, summary')]\
+                    "return [...document.querySelectorAll('button, input:not([type=radio]):not([type=checkbox]):not([type=file]), select, summary')]\
                      .filter(e => e.offsetParent && e.getBoundingClientRect().height > 0 \
-                     && e.getBoundingClientRect().height < 24).map(e => e.textContent.slice(0, 40) + e.id);",
+                     && e.getBoundingClientRect().height < 24).map(e => e.outerHTML.slice(0, 90));",
                 )
                 .await?;
             assert_eq!(small.as_array().map(Vec::len), Some(0), "{size:?}: {small}");

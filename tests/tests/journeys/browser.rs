@@ -175,6 +175,14 @@ impl Page {
         self.settle().await
     }
 
+    /// Replaces what is typed at a path in one go, so that no half-typed number is ever there.
+    pub async fn paste_at(&self, path: &str, text: &str) -> WebDriverResult<()> {
+        let script = "const field = arguments[0]; field.focus(); field.select(); \
+             document.execCommand(arguments[1] ? 'insertText' : 'delete', false, arguments[1]);";
+        self.driver.execute(script, vec![self.field(path).await?.to_json()?, json!(text)]).await?;
+        self.settle().await
+    }
+
     /// Chooses a value in the list at a path.
     pub async fn choose(&self, path: &str, value: &str) -> WebDriverResult<()> {
         let field = self.field(path).await?;
