@@ -91,13 +91,15 @@ fn Choice(
     let (id, name, density) = (row.id.clone(), row.name.clone(), row.density.clone());
     let choose = move || w.draft.update(|d| d.choose_solvent(&id, &name, density.clone()));
     let of_facts = row.facts.iter().map(|f| format!("{}: {}", f.what, f.source));
+    let of_limits = row.limits.iter().map(|f| format!("{}: {}; {}", f.what, f.value, f.source));
     let of_cautions = row.cautions.iter().map(|c| format!("{}: {}", c.what_can_happen, c.source));
-    let sources: Vec<String> = of_facts.chain(of_cautions).collect();
+    let sources: Vec<String> = of_limits.chain(of_facts).chain(of_cautions).collect();
     let sources = sources.into_iter().map(|words| view! { <li>{words}</li> });
-    let (long, short): (Vec<Fact>, Vec<Fact>) = row.facts.into_iter().partition(|f| f.value.len() > LONGEST_FACT);
-    let short = short.into_iter().map(|f| {
+    let (long, limits): (Vec<Fact>, Vec<Fact>) = row.limits.into_iter().partition(|f| f.value.len() > LONGEST_FACT);
+    let short = row.facts.into_iter().map(|f| (f, false)).chain(limits.into_iter().map(|f| (f, true)));
+    let short = short.map(|(f, limit)| {
         view! {
-            <div class="fact">
+            <div class="fact" class:limit=limit>
                 <dt>{f.what}</dt>
                 <dd>{f.value}</dd>
             </div>
@@ -120,7 +122,7 @@ fn Choice(
             <div class="cautions">{cautions.collect_view()}</div>
             {note}
             <details class="quiet">
-                <summary>"sources"</summary>
+                <summary>"limits of each list, and sources"</summary>
                 <ul>{sources.collect_view()}</ul>
             </details>
         </div>

@@ -21,6 +21,8 @@ pub struct SolventRow {
     pub density: NumberText,
     /// What it is, value and source.
     pub facts: Vec<Fact>,
+    /// What each list of limits says, and rules of its own.
+    pub limits: Vec<Fact>,
     /// Hazard codes with their meaning.
     pub codes: Vec<(String, String)>,
     /// Cautions for choosing and opening it.
@@ -59,6 +61,7 @@ fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRow {
             source: cite(&s.density_source),
         },
         facts: facts(s, liquor_density),
+        limits: exposure_limits_for(&s.id).map(|l| limit_facts(&l)).unwrap_or_default(),
         codes: s.h_codes.iter().chain(&s.euh_codes).map(statement).collect(),
         cautions: at_step(&cautions_for(&s.id), CautionStep::Solvent),
         note: s.note.clone(),
@@ -98,8 +101,9 @@ fn facts(s: &Solvent, liquor_density: Option<f64>) -> Vec<Fact> {
         PeroxideClass::OnConcentration => "dangerous on evaporating: test first",
     };
     list.push(fact("peroxides", peroxides.to_owned(), &s.peroxide_source));
-    if let Some(limits) = exposure_limits_for(&s.id) {
-        list.extend(limit_facts(&limits));
+    if let Some((limits, ppm)) = exposure_limits_for(&s.id).and_then(|l| l.strictest_twa_ppm.map(|v| (l, v))) {
+        let words = format!("{ppm} ppm ({})", limits.strictest_basis);
+        list.push(fact("lowest average listed", words, &limits.special_source));
     }
     list
 }
@@ -116,9 +120,6 @@ fn limit_facts(l: &ExposureLimits) -> Vec<Fact> {
     let parts = |items: [Option<String>; 3], note: &str| -> Vec<String> {
         items.into_iter().flatten().chain((!note.is_empty()).then(|| note.to_owned())).collect()
     };
-    if let Some(v) = l.strictest_twa_ppm {
-        add("lowest average listed", vec![format!("{v} ppm ({})", l.strictest_basis)], &l.special_source);
-    }
     let osha =
         [ppm(l.osha_pel_twa_ppm, "over 8 h"), ppm(l.osha_stel_ppm, "short term"), ppm(l.osha_ceiling_ppm, "ceiling")];
     add("US OSHA", parts(osha, &l.osha_note), &l.osha_source);

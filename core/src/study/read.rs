@@ -53,7 +53,9 @@ pub fn to_text(study: &Study) -> String {
 /// The JSON Schema of a study file.
 #[cfg(feature = "schema")]
 pub fn schema_text() -> String {
-    let schema = schemars::schema_for!(Study);
+    let mut schema = serde_json::to_value(schemars::schema_for!(Study)).unwrap_or_default();
+    // Members keep their order only where some other crate asks serde_json for it.
+    schema.sort_all_objects();
     let mut text = serde_json::to_string_pretty(&schema).unwrap_or_default();
     text.push('\n');
     text
