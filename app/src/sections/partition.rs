@@ -64,7 +64,7 @@ fn KFields(
     let name = of_draft(move |d| d.name_of(id));
     let is_target = of_draft(move |d| d.feed.target == id);
     view! {
-        <div class="row" class:target=is_target>
+        <div class="row coefficient" class:target=is_target>
             <div class="row-head">
                 <strong>{live(move || name.get())}</strong>
             </div>
