@@ -32,6 +32,11 @@ impl Case {
         self.inputs.get(key).unwrap_or_else(|| panic!("{}: no input {key} in {:?}", self.id, self.inputs))
     }
 
+    /// All numbers of an input, if the row has it.
+    pub fn get(&self, key: &str) -> Option<&[f64]> {
+        self.inputs.get(key).map(Vec::as_slice)
+    }
+
     /// The single number of an input.
     pub fn num(&self, key: &str) -> f64 {
         self.all(key)[0]

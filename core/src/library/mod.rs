@@ -10,12 +10,14 @@
 //! | cautions for the bench; what a hazard code means | [`cautions`] | `cautions.csv`, `hazard_statements.csv` |
 //! | published partition coefficients | [`partition`] | `partition.csv` |
 //! | solutes, their sites, and printed readings of their constants | [`solutes`] | `solutes.csv`, `pka_readings.csv` |
+//! | Debye–Hückel constant against temperature | [`activity`] | `activity_constants.csv` |
 //! | what a source is and how far it was checked | [`sources`] | `sources.csv` |
 //!
 //! **Invariant:** a number is never here without a [`sources::Source`] that says whether it was
 //! read, quoted, calculated or is from memory.
 //! A row that cannot be read is left out; the unit tests hold that there is none.
 
+pub mod activity;
 pub mod cautions;
 pub mod limits;
 pub mod partition;

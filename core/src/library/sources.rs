@@ -107,7 +107,7 @@ mod tests {
     use super::*;
 
     /// Every table that names sources.
-    const TABLES: [&str; 7] = [
+    const TABLES: [&str; 8] = [
         include_str!("../../data/solvents.csv"),
         include_str!("../../data/exposure_limits.csv"),
         include_str!("../../data/hazard_statements.csv"),
@@ -115,6 +115,7 @@ mod tests {
         include_str!("../../data/partition.csv"),
         include_str!("../../data/solutes.csv"),
         include_str!("../../data/pka_readings.csv"),
+        include_str!("../../data/activity_constants.csv"),
     ];
 
     /// The whole library travels in the one-file page, whose size is bounded.

@@ -84,6 +84,15 @@ pub fn constants_in_use(ingredient: &Ingredient, t: f64) -> Vec<Constant> {
 /// Reference: definition of the species fractions; citric acid at pH 3.4 (pKa 3.128, 4.761,
 /// 6.396): 0.3387, 0.6336, 0.0276, 2.79e−5.
 pub fn speciate(constants: &[Constant], ph: f64) -> Speciation {
+    speciate_with_activities(constants, ph, 0.0)
+}
+
+/// As [`speciate`], concentrations from thermodynamic constants: the weight of a state of charge
+/// `z` is divided by its activity coefficient, `log10 γ = z²·log_gamma_per_z2`.
+///
+/// Valid and reference: `ph` on the activity scale; coefficients as in
+/// [`super::activity::log_gamma_per_z2`].
+pub fn speciate_with_activities(constants: &[Constant], ph: f64, log_gamma_per_z2: f64) -> Speciation {
     let mut sorted = constants.to_vec();
     sorted.sort_by(|a, b| b.pka.total_cmp(&a.pka));
     let n_acid = sorted.iter().filter(|c| c.kind == SiteKind::Acid).count();
@@ -94,6 +103,10 @@ pub fn speciate(constants: &[Constant], ph: f64) -> Speciation {
     for c in &sorted {
         sum += c.pka - ph;
         log_weights.push(sum);
+    }
+    for (k, w) in log_weights.iter_mut().enumerate() {
+        let z = k as f64 - n_acid as f64;
+        *w -= z * z * log_gamma_per_z2;
     }
     let top = log_weights.iter().copied().fold(f64::NEG_INFINITY, f64::max);
     let weights: Vec<f64> = log_weights.iter().map(|w| math::exp10(w - top)).collect();
