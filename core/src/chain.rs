@@ -6,13 +6,14 @@ use crate::math;
 use crate::outcome::Notice;
 use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::plan::{IngredientRow, Inverse, Level, StateShare};
+use crate::process::acidity::{self, Acidity};
 use crate::process::concentrate::{self, Liquor};
 use crate::process::make_up::{self, LossRow, MadeUp, MakeUpPlan};
 use crate::process::portions::{self, PortionIn, StageRow, StagesIn, StagesOut, removed, solve_rising};
 use crate::process::{counter_current, isolate};
 use crate::solution::dose::{self, Buffer, Dose};
 use crate::solution::ionisation::{Constant, constants_in_use, speciate};
-use crate::study::{Amount, ConcentrateTo, LossPlace, Problem, Scheme, SiteKind, Study};
+use crate::study::{ConcentrateTo, LossPlace, Problem, Scheme, SiteKind, Study};
 
 /// Slices in which continuous extraction is shown.
 const CONTINUOUS_SLICES: usize = 10;
@@ -25,6 +26,7 @@ const LARGEST_PORTION_ML: f64 = 1e6;
 /// Everything one pass computes.
 pub(crate) struct Chain {
     pub liquor: Liquor,
+    pub acidity: Acidity,
     pub ph: f64,
     /// Index of the target among the ingredients.
     pub target: usize,
@@ -40,15 +42,6 @@ pub(crate) struct Chain {
     constants: Vec<Vec<Constant>>,
 }
 
-/// Amount of an ingredient in the feed [mg].
-fn feed_mg(amount: &Amount, feed_ml: f64) -> f64 {
-    match amount {
-        Amount::MassMg(q) => q.value,
-        Amount::MgPerL(q) => q.value * feed_ml / 1000.0,
-        Amount::PerServing { mg, serving_ml } => mg.value * feed_ml / serving_ml.value,
-    }
-}
-
 /// Fraction left after all of `rows` one after another.
 fn left_after(rows: &[(usize, f64, f64)]) -> f64 {
     rows.iter().fold(1.0, |left, (_, _, f)| left * (1.0 - f))
@@ -57,6 +50,16 @@ fn left_after(rows: &[(usize, f64, f64)]) -> f64 {
 impl Chain {
     /// Runs `study`, which has passed [`crate::study::check`] or is within a step of one that has.
     pub fn run(study: &Study) -> Result<Self, Problem> {
+        Self::run_with(study, None)
+    }
+
+    /// Runs `study`, which is `of` with other numbers; what has not changed is not worked out anew.
+    pub fn run_near(study: &Study, of: &Study, chain: &Self) -> Result<Self, Problem> {
+        let same = study.feed == of.feed && study.concentrate == of.concentrate && study.losses == of.losses;
+        Self::run_with(study, same.then_some(&chain.acidity))
+    }
+
+    fn run_with(study: &Study, acidity_known: Option<&Acidity>) -> Result<Self, Problem> {
         let t = study.feed.temperature_c.value;
         let ingredients = &study.feed.ingredients;
         let target = ingredients.iter().position(|i| i.name == study.feed.target).ok_or_else(|| {
@@ -71,11 +74,15 @@ impl Chain {
         let at_liquor = make_up::losses_at(&study.losses, LossPlace::Liquor, liquor.volume_ml)?;
         let kept_liquor = left_after(&at_liquor);
         let charged_ml = liquor.volume_ml * kept_liquor;
-        let start_mg: Vec<f64> = ingredients.iter().map(|i| feed_mg(&i.amount, v0)).collect();
+        let start_mg: Vec<f64> = ingredients.iter().map(|i| i.amount.mg_in(v0)).collect();
         let charged_mg: Vec<f64> = start_mg.iter().map(|m| m * kept_feed * kept_liquor).collect();
 
         // Ionisation and distribution at the liquor's own pH.
-        let ph = study.concentrate.ph_after.as_ref().unwrap_or(&study.feed.ph).value;
+        let acidity = match acidity_known {
+            Some(known) => known.clone(),
+            None => acidity::acidity(study, &liquor)?,
+        };
+        let ph = acidity.liquor_ph;
         let constants: Vec<Vec<Constant>> = ingredients.iter().map(|i| constants_in_use(i, t)).collect();
         let d: Vec<f64> = ingredients
             .iter()
@@ -129,6 +136,7 @@ impl Chain {
         let losses = ledger(study, [&at_feed, &at_liquor, &at_raffinate], &stages, charged_ml, v0);
         Ok(Self {
             liquor,
+            acidity,
             ph,
             target,
             rows,
@@ -359,18 +367,9 @@ impl Chain {
 
     /// What the reader should know.
     pub fn notices(&self, study: &Study) -> Vec<Notice> {
-        let mut notices = Vec::new();
+        let mut notices = self.acidity.notices.clone();
         let mut say = |at: &str, text: String| notices.push(Notice::new(at, text));
         let t = study.feed.temperature_c.value;
-        if study.concentrate.to != ConcentrateTo::Unchanged && study.concentrate.ph_after.is_none() {
-            say(
-                "concentrate.ph_after",
-                format!(
-                    "The liquor is taken to keep the feed's pH of {}. Taking water off usually lowers the pH of an acid liquid by a few tenths: measure it and enter it.",
-                    self.ph
-                ),
-            );
-        }
         for (i, row) in self.rows.iter().enumerate() {
             let at = format!("feed.ingredients[{i}]");
             if row.zwitterion && row.fraction_neutral > 0.01 {

@@ -8,6 +8,7 @@ use crate::judgement::uncertainty::{Propagated, interval, propagate};
 use crate::math;
 use crate::outcome::{Notice, Outcome};
 use crate::partition::distribution::{distribution_ratio, partition_at};
+use crate::process::acidity::Acidity;
 use crate::process::concentrate::Liquor;
 use crate::process::isolate::{self, IsolateResult};
 use crate::process::make_up::MakeUpPlan;
@@ -197,6 +198,8 @@ pub struct Plan {
     pub goal_fraction: f64,
     /// pH at which the extraction happens.
     pub extraction_ph: f64,
+    /// pH of feed and liquor and where each comes from.
+    pub acidity: Acidity,
     /// The liquor after concentrating.
     pub liquor: Liquor,
     /// Each ingredient, target first.
@@ -276,7 +279,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         return Err(problems);
     }
     let chain = Chain::run(study).map_err(|p| vec![p])?;
-    let spread = propagate(study, &|s| Chain::run(s).ok().map(|c| c.outputs(s))).unwrap_or(Propagated {
+    let spread = propagate(study, &|s| Chain::run_near(s, study, &chain).ok().map(|c| c.outputs(s))).unwrap_or(Propagated {
         values: chain.outputs(study),
         u: vec![0.0; OUTPUTS],
         components: Vec::new(),
@@ -308,6 +311,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         answer,
         goal_fraction: goal,
         extraction_ph: chain.ph,
+        acidity: chain.acidity.clone(),
         liquor: chain.liquor.clone(),
         ingredients: chain.rows.clone(),
         readings,

@@ -1,5 +1,6 @@
 //! One file per step of the flow.
 
+pub mod acidity;
 pub mod concentrate;
 pub mod counter_current;
 pub mod isolate;

@@ -92,6 +92,8 @@ fn allowed(path: &str) -> Allowed {
         "molar_mass_g_per_mol" => a("the molar mass", "g/mol", 1.0, true, 1e6, "check the unit"),
         "mass_mg" | "mg" => a("the mass", "mg", 0.0, true, 1e9, "check the unit"),
         "mg_per_l" => a("the concentration", "mg/L", 0.0, true, 1e6, "check the unit"),
+        "mmol_per_l" => a("the concentration of the ion", "mmol/L", 0.0, true, 2e4, "check the unit"),
+        "co2_g_per_l" => a("dissolved carbon dioxide", "g/L", 0.0, true, 40.0, "a fizzy drink holds 4 to 9 g/L"),
         "mg_per_ml" => a("the concentration", "mg/mL", 0.0, true, 1e3, "check the unit"),
         "pka" => a("pKa", "", -10.0, true, 20.0, "check that it is not a Ka or Kb"),
         "value" => a("the published constant", "", -10.0, true, 25.0, "check that it is not a Ka or Kb"),
@@ -136,6 +138,9 @@ pub fn words_of(study: &Study, path: &str) -> String {
     if let Some(i) = index("extraction.portions[") {
         let portion = format!("portion {}", i + 1);
         return if path.ends_with("volume_ml") { portion } else { format!("{what} of {portion}") };
+    }
+    if let Some(ion) = index("feed.strong_ions[").and_then(|i| study.feed.strong_ions.get(i)) {
+        return format!("{what}, {}", ion.name);
     }
     if let Some(l) = index("losses[").and_then(|i| study.losses.get(i)) {
         return format!("{what} as “{}”", l.what);
@@ -216,6 +221,17 @@ fn feed(study: &Study, say: &mut dyn FnMut(&str, String)) {
             say(&format!("{at}.name"), format!("“{}” is listed twice; names must differ", ing.name));
         }
         constants(&at, ing, say);
+    }
+    for (i, ion) in study.feed.strong_ions.iter().enumerate() {
+        if ion.charge == 0 || ion.charge.abs() > 8 {
+            say(
+                &format!("feed.strong_ions[{i}].charge"),
+                format!("the charge is {}; it can be −8 to −1 or 1 to 8, e.g. 1 for sodium, −1 for chloride", ion.charge),
+            );
+        }
+    }
+    if study.feed.strong_ions.len() > MAX_INGREDIENTS {
+        say("feed.strong_ions", format!("{} ions are listed; at most {MAX_INGREDIENTS} are handled", study.feed.strong_ions.len()));
     }
     match study.target() {
         None if !list.is_empty() => say(

@@ -10,8 +10,9 @@ use serde::{Deserialize, Serialize};
 pub struct Feed {
     /// Volume [mL].
     pub volume_ml: Quantity,
-    /// pH of the liquid itself, as measured.
-    pub ph: Quantity,
+    /// pH of the liquid itself, as measured; worked out from the composition if not stated.
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub ph: Option<Quantity>,
     /// Temperature at which the extraction is done [°C].
     pub temperature_c: Quantity,
     /// Soluble solids [°Brix = g sucrose-equivalent per 100 g solution].
@@ -21,6 +22,25 @@ pub struct Feed {
     pub target: String,
     /// Target and company.
     pub ingredients: Vec<Ingredient>,
+    /// Ions whose charge no pH changes, e.g. sodium, as far as they are known.
+    #[serde(default, skip_serializing_if = "Vec::is_empty")]
+    pub strong_ions: Vec<StrongIon>,
+    /// Dissolved carbon dioxide [g/L].
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub co2_g_per_l: Option<Quantity>,
+}
+
+/// An ion whose charge no pH changes.
+#[derive(Clone, Debug, PartialEq, Serialize, Deserialize)]
+#[cfg_attr(feature = "schema", derive(schemars::JsonSchema))]
+#[serde(deny_unknown_fields)]
+pub struct StrongIon {
+    /// Name.
+    pub name: String,
+    /// Charge number, e.g. 1 for sodium, −1 for chloride.
+    pub charge: i32,
+    /// Concentration in the feed [mmol/L].
+    pub mmol_per_l: Quantity,
 }
 
 /// One ingredient of the feed.
@@ -59,6 +79,17 @@ pub enum Amount {
         /// Volume of one serving [mL].
         serving_ml: Quantity,
     },
+}
+
+impl Amount {
+    /// Amount in a feed of `feed_ml` [mL], in mg.
+    pub fn mg_in(&self, feed_ml: f64) -> f64 {
+        match self {
+            Self::MassMg(q) => q.value,
+            Self::MgPerL(q) => q.value * feed_ml / 1000.0,
+            Self::PerServing { mg, serving_ml } => mg.value * feed_ml / serving_ml.value,
+        }
+    }
 }
 
 /// A site that gains or loses a proton, by its macroscopic constant.

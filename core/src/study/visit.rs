@@ -14,9 +14,13 @@ pub fn for_each_quantity(study: &mut Study, f: &mut dyn FnMut(&str, &mut Quantit
     f("goal.removal_fraction", &mut study.goal.removal_fraction);
     let feed = &mut study.feed;
     f("feed.volume_ml", &mut feed.volume_ml);
-    f("feed.ph", &mut feed.ph);
+    maybe("feed.ph", &mut feed.ph, f);
     f("feed.temperature_c", &mut feed.temperature_c);
     maybe("feed.soluble_solids_brix", &mut feed.soluble_solids_brix, f);
+    for (i, ion) in feed.strong_ions.iter_mut().enumerate() {
+        f(&format!("feed.strong_ions[{i}].mmol_per_l"), &mut ion.mmol_per_l);
+    }
+    maybe("feed.co2_g_per_l", &mut feed.co2_g_per_l, f);
     for (i, ing) in feed.ingredients.iter_mut().enumerate() {
         let at = format!("feed.ingredients[{i}]");
         maybe(&format!("{at}.molar_mass_g_per_mol"), &mut ing.molar_mass_g_per_mol, f);
