@@ -640,3 +640,8 @@ pub(crate) fn percent(fraction: f64) -> String {
         if a < 1e-6 { "less than 0.000001 %".to_owned() } else { format!("{p:.digits$} %") }
     }
 }
+
+/// A pH as it is told in words, to 0.01.
+pub(crate) fn to_hundredths(ph: f64) -> f64 {
+    (ph * 100.0).round() / 100.0
+}

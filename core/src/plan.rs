@@ -1,6 +1,6 @@
 //! The whole chain: a [`Study`] in, a [`Plan`] out, in the words of the flow.
 
-use crate::chain::Chain;
+use crate::chain::{Chain, to_hundredths};
 use crate::judgement::balance::Balance;
 use crate::judgement::explain;
 use crate::judgement::readings::{self, ReadingsReport};
@@ -279,11 +279,8 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         return Err(problems);
     }
     let chain = Chain::run(study).map_err(|p| vec![p])?;
-    let spread = propagate(study, &|s| Chain::run_near(s, study, &chain).ok().map(|c| c.outputs(s))).unwrap_or(Propagated {
-        values: chain.outputs(study),
-        u: vec![0.0; OUTPUTS],
-        components: Vec::new(),
-    });
+    let spread = propagate(study, &|s| Chain::run_near(s, study, &chain).ok().map(|c| c.outputs(s)))
+        .unwrap_or(Propagated { values: chain.outputs(study), u: vec![0.0; OUTPUTS], components: Vec::new() });
     let mut notices = chain.notices(study);
     let headline = headline(study, &chain, &spread);
     if headline.removal_fraction.value + 2.0 * spread.u[REMOVAL] > 1.0 {
@@ -302,7 +299,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         goal,
         planned: &headline.removal_fraction,
         target: &chain.rows[chain.target],
-        ph: chain.ph,
+        ph: to_hundredths(chain.ph),
         readings: readings.as_ref(),
         inverse: &inverse,
         isolate: isolate.as_ref(),

@@ -122,7 +122,9 @@ prop_compose! {
             goal: Goal { removal_fraction: 0.9.into() },
             feed: Feed {
                 volume_ml: volume_ml.clone(),
-                ph,
+                ph: Some(ph),
+                strong_ions: Vec::new(),
+                co2_g_per_l: None,
                 temperature_c: 20.0.into(),
                 soluble_solids_brix: brix,
                 target: "ingredient 0".into(),
@@ -210,10 +212,11 @@ proptest! {
         prop_assert!((0.0 - ROUNDING..=1.0 + ROUNDING).contains(&before));
     }
 
-    /// All masses doubled: the same fractions, K and all else being ratios.
+    /// All masses doubled at the same, measured pH: the same fractions, K and all else being ratios.
     #[test]
     fn removal_does_not_depend_on_scale(mut s in study()) {
         s.extraction.entering_solvent.clear();
+        s.concentrate.ph_after = s.feed.ph.clone();
         prop_assume!(check(&s).is_empty());
         let one = plan(&s).expect("a plan").value;
         for i in &mut s.feed.ingredients {
@@ -236,7 +239,9 @@ proptest! {
         s.feed.ingredients.reverse();
         s.partition.reverse();
         let two = plan(&s).expect("a plan").value;
-        prop_assert_eq!(one.headline.removal_fraction.value, two.headline.removal_fraction.value);
+        // The charges are summed in another order, so the last digits of the pH may differ.
+        let (a, b) = (one.headline.removal_fraction.value, two.headline.removal_fraction.value);
+        prop_assert!((a - b).abs() < 1e-9, "{a} {b}");
         prop_assert_eq!(one.headline.make_up_volume_ml.value, two.headline.make_up_volume_ml.value);
     }
 

@@ -73,7 +73,7 @@ fn carrier(c: &Case, keys: [&str; 3]) -> Study {
     let mut s = bare(&study());
     let q = |key: &str| Quantity::with_u(c.all(key)[0], c.all(key)[1]);
     s.feed.volume_ml = q(keys[0]);
-    s.feed.ph = q(keys[1]);
+    s.feed.ph = Some(q(keys[1]));
     s.feed.temperature_c = q(keys[2]);
     s
 }
@@ -212,16 +212,23 @@ fn work_out(c: &Case) -> Vec<(&'static str, f64)> {
         "J-01" => {
             let s = carrier(c, ["m", "P", "V"]);
             let p = propagate(&s, &|s| {
-                Some(vec![1000.0 * s.feed.volume_ml.value * s.feed.ph.value / s.feed.temperature_c.value])
+                Some(vec![
+                    1000.0 * s.feed.volume_ml.value * s.feed.ph.as_ref().map_or(f64::NAN, |q| q.value)
+                        / s.feed.temperature_c.value,
+                ])
             })
             .expect("a result");
             vec![("c", p.values[0]), ("u", p.u[0])]
         }
         "J-02" => {
             let s = carrier(c, ["S", "S0", "k"]);
-            let p =
-                propagate(&s, &|s| Some(vec![(s.feed.volume_ml.value - s.feed.ph.value) / s.feed.temperature_c.value]))
-                    .expect("a result");
+            let p = propagate(&s, &|s| {
+                Some(vec![
+                    (s.feed.volume_ml.value - s.feed.ph.as_ref().map_or(f64::NAN, |q| q.value))
+                        / s.feed.temperature_c.value,
+                ])
+            })
+            .expect("a result");
             vec![("c", p.values[0]), ("u", p.u[0])]
         }
         "J-10" => {

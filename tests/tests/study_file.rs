@@ -57,7 +57,9 @@ fn the_real_case() {
     assert!((1.0 - left - number("/headline/removal_fraction_found/value")).abs() < 1e-9);
     let readings = v.pointer("/readings/rows").and_then(Value::as_array).expect("readings");
     let verdicts: Vec<&str> = readings.iter().map(|r| r["verdict"].as_str().expect("a verdict")).collect();
-    assert_eq!(verdicts, ["reaches", "reaches", "borderline", "falls_short"]);
+    // 10.4 as a pKb is a pKa of 3.76 at 20 °C: at the liquor's pH of 3.3 a quarter is neutral, D 2.5,
+    // and 1.75·1.375³ leaves 22 % in; at the feed's 3.4 it would be borderline.
+    assert_eq!(verdicts, ["reaches", "reaches", "falls_short", "falls_short"]);
     assert_eq!(v.pointer("/readings/decision_changes"), Some(&json!(true)));
 }
 
@@ -100,7 +102,7 @@ fn a_weak_acid_near_its_pka_is_borderline() {
 fn readings_that_matter_are_named() {
     for ph in [3.0, 3.5, 4.0] {
         let mut s = parse(&text("neutral-alkaloid")).expect("a study");
-        s.feed.ph = ph.into();
+        s.feed.ph = Some(ph.into());
         let r = unstir_core::plan::plan(&s).expect("a plan").value.readings.expect("readings");
         let neutral: Vec<f64> = r.rows.iter().map(|r| r.fraction_neutral).collect();
         assert!(neutral[0] > 0.99 && neutral[1] > 0.99 && neutral[2] > 0.1 && neutral[3] < 1e-5, "{neutral:?}");

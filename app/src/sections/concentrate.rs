@@ -48,7 +48,7 @@ pub fn ConcentrateFields() -> impl IntoView {
                 </div>
                 <div class="when" hidden=live(move || !changes.get())>
                     {fixed_number(
-                        hinted("pH afterwards", "", "measure it; the feed's is used while this is empty"),
+                        hinted("pH afterwards", "", "measure it; while this is empty it is worked out"),
                         "concentrate.ph_after",
                         |d| &d.concentrate.ph_after,
                         |d| &mut d.concentrate.ph_after,

@@ -28,7 +28,12 @@ pub fn Ionisation() -> impl IntoView {
     let sum = of_plan(|g| {
         let target = g.plan.ingredients.iter().find(|i| i.is_target);
         target.map_or_else(String::new, |t| {
-            format!("{} of {} is neutral at pH {}", percent(t.fraction_neutral), t.name, g.plan.extraction_ph)
+            format!(
+                "{} of {} is neutral at pH {}",
+                percent(t.fraction_neutral),
+                t.name,
+                crate::view_model::format::ph_words(g.plan.extraction_ph)
+            )
         })
     });
     let there = Signal::derive(move || sum.with(|s| !s.is_empty()));

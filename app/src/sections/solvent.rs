@@ -22,7 +22,12 @@ pub fn SolventStep() -> impl IntoView {
         let target = g.plan.ingredients.iter().find(|i| i.is_target);
         target.map_or_else(String::new, |t| {
             let d = crate::view_model::format::significant(t.d, 3);
-            format!("{}: D of {} is {d} at pH {}", g.study.solvent.name, t.name, g.plan.extraction_ph)
+            format!(
+                "{}: D of {} is {d} at pH {}",
+                g.study.solvent.name,
+                t.name,
+                crate::view_model::format::ph_words(g.plan.extraction_ph)
+            )
         })
     });
     let id = of_draft(|d| d.solvent.id.clone());

@@ -57,10 +57,29 @@ pub struct FeedDraft {
     pub temperature: NumberText,
     /// Soluble solids [°Brix]; optional.
     pub brix: NumberText,
+    /// Dissolved carbon dioxide [g/L]; optional.
+    #[serde(default)]
+    pub co2: NumberText,
+    /// Ions of fixed charge.
+    #[serde(default)]
+    pub ions: Vec<IonDraft>,
     /// Row of the ingredient to remove.
     pub target: RowId,
     /// Name of the target in a file that does not list it.
     pub target_not_listed: String,
+}
+
+/// An ion of fixed charge, as typed.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct IonDraft {
+    /// Row id.
+    pub id: RowId,
+    /// Name.
+    pub name: String,
+    /// Charge number.
+    pub charge: String,
+    /// Concentration [mmol/L].
+    pub amount: NumberText,
 }
 
 /// How an amount is stated.

@@ -146,6 +146,12 @@ impl Draft {
         });
     }
 
+    /// Adds an ion of fixed charge.
+    pub fn add_ion(&mut self) {
+        let id = self.new_id();
+        self.feed.ions.push(IonDraft { id, charge: "1".to_owned(), ..IonDraft::default() });
+    }
+
     /// What is typed about an ingredient in the solvent in use; the first row where there are two.
     pub fn partition_of(&self, ingredient: RowId) -> Option<&PartitionDraft> {
         self.partition.iter().find(|p| p.ingredient == ingredient && p.solvent == self.solvent.id)
@@ -222,6 +228,7 @@ impl Draft {
         self.extraction.portions.iter_mut().for_each(|p| f(&mut p.id));
         self.extraction.entering.iter_mut().for_each(|e| f(&mut e.id));
         self.losses.iter_mut().for_each(|l| f(&mut l.id));
+        self.feed.ions.iter_mut().for_each(|i| f(&mut i.id));
     }
 
     /// Takes a solvent: its id, name and density.

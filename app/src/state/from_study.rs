@@ -12,7 +12,13 @@ impl Draft {
         d.note = study.note.clone();
         d.goal = NumberText::from_quantity(&study.goal.removal_fraction);
         d.feed.volume = NumberText::from_quantity(&study.feed.volume_ml);
-        d.feed.ph = NumberText::from_quantity(&study.feed.ph);
+        d.feed.ph = NumberText::from_optional(study.feed.ph.as_ref());
+        d.feed.co2 = NumberText::from_optional(study.feed.co2_g_per_l.as_ref());
+        for ion in &study.feed.strong_ions {
+            let id = d.new_id();
+            let amount = NumberText::from_quantity(&ion.mmol_per_l);
+            d.feed.ions.push(IonDraft { id, name: ion.name.clone(), charge: ion.charge.to_string(), amount });
+        }
         d.feed.temperature = NumberText::from_quantity(&study.feed.temperature_c);
         d.feed.brix = NumberText::from_optional(study.feed.soluble_solids_brix.as_ref());
         for ingredient in &study.feed.ingredients {
@@ -179,7 +185,7 @@ fn temperature(t: f64) -> String {
 mod tests {
     use super::super::demos::DEMOS;
     use super::*;
-    use unstir_core::study::{Quantity, parse};
+    use unstir_core::study::{Quantity, StrongIon, parse};
 
     #[test]
     fn every_demo_survives_as_text() {
@@ -205,6 +211,8 @@ mod tests {
         study.partition[0].k_temperature_c = 30.0;
         study.make_up.made_up_to_ml = Some(500.0.into());
         study.concentrate.ph_after = Some(3.3.into());
+        study.feed.co2_g_per_l = Some(5.0.into());
+        study.feed.strong_ions.push(StrongIon { name: "chloride".into(), charge: -1, mmol_per_l: 12.0.into() });
         assert_eq!(Draft::from_study(&study).to_study(), Ok(study));
     }
 

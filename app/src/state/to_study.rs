@@ -4,8 +4,8 @@ use super::draft::*;
 use super::number_text::{NumberText, number};
 use unstir_core::study::{
     Amount, Concentrate, ConcentrateTo, Disputed, EnteringSolvent, Extraction, Feed, Goal, Ingredient, Isolate, Loss,
-    LossAmount, MakeUp, PartitionEntry, Portion, Problem, Quantity, Reading, Scheme, Site, SolventChoice, Study,
-    VERSION, check,
+    LossAmount, MakeUp, PartitionEntry, Portion, Problem, Quantity, Reading, Scheme, Site, SolventChoice, StrongIon,
+    Study, VERSION, check,
 };
 
 /// Reads the numbers of a draft and notes each text that is no number.
@@ -108,7 +108,9 @@ impl Draft {
         let f = &self.feed;
         Feed {
             volume_ml: r.required(&f.volume, "feed.volume_ml", "feed volume"),
-            ph: r.required(&f.ph, "feed.ph", "pH of the feed"),
+            ph: r.optional(&f.ph, "feed.ph", "pH of the feed"),
+            strong_ions: f.ions.iter().enumerate().map(|(i, ion)| read_ion(ion, i, r)).collect(),
+            co2_g_per_l: r.optional(&f.co2, "feed.co2_g_per_l", "dissolved carbon dioxide"),
             temperature_c: r.required(&f.temperature, "feed.temperature_c", "temperature"),
             soluble_solids_brix: r.optional(&f.brix, "feed.soluble_solids_brix", "soluble solids"),
             target: self.target().map_or_else(|| f.target_not_listed.clone(), |t| t.name.clone()),
@@ -238,6 +240,23 @@ fn read_ingredient(g: &IngredientDraft, index: usize, r: &mut Reader) -> Ingredi
                 .collect(),
         }),
     }
+}
+
+fn read_ion(ion: &IonDraft, i: usize, r: &mut Reader) -> StrongIon {
+    let at = format!("feed.strong_ions[{i}]");
+    let charge = match number(&ion.charge) {
+        Ok(z) if z.fract() == 0.0 && (-8.0..=8.0).contains(&z) => z as i32,
+        Ok(z) => {
+            r.problem(format!("{at}.charge"), format!("charge: {z} is not a whole number from −8 to 8"));
+            1
+        }
+        Err(e) => {
+            r.problem(format!("{at}.charge"), format!("charge: {e}"));
+            1
+        }
+    };
+    let mmol_per_l = r.required(&ion.amount, format!("{at}.mmol_per_l"), "concentration of the ion");
+    StrongIon { name: ion.name.clone(), charge, mmol_per_l }
 }
 
 fn read_site(s: &SiteDraft, at: &str, j: usize, r: &mut Reader) -> Site {

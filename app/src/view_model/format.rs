@@ -2,6 +2,11 @@
 
 use unstir_core::plan::Interval;
 
+/// A pH as it is told in words, to 0.01.
+pub fn ph_words(ph: f64) -> String {
+    ((ph * 100.0).round() / 100.0).to_string().replace('-', "−")
+}
+
 /// `value` to `digits` significant figures: plain from 0.001 up to a million, else as a power of ten.
 pub fn significant(value: f64, digits: usize) -> String {
     if value == 0.0 {

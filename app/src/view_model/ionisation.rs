@@ -1,6 +1,6 @@
 //! Protonation states, readings of a disputed constant, and their charts.
 
-use super::format::{fixed, measured_percent, percent, significant, stated};
+use super::format::{fixed, measured_percent, percent, ph_words, significant, stated};
 use crate::charts::{LogDData, SpeciesData};
 use unstir_core::plan::{Curves, IngredientRow, Plan};
 use unstir_core::study::Study;
@@ -45,12 +45,12 @@ pub fn charge(z: i32) -> String {
 /// How D of the target was computed, with the values put in.
 pub fn d_working(plan: &Plan) -> Vec<String> {
     let Some(t) = plan.ingredients.iter().find(|i| i.is_target) else { return Vec::new() };
-    let ph = plan.extraction_ph;
+    let ph = ph_words(plan.extraction_ph);
     let mut lines: Vec<String> = t
         .pka
         .iter()
         .map(|(pka, kind)| {
-            let ratio = significant(10f64.powf(ph - pka), 3);
+            let ratio = significant(10f64.powf(plan.extraction_ph - pka), 3);
             format!(
                 "{kind}, pKa {}: deprotonated/protonated = 10^(pH − pKa) = 10^({ph} − {}) = {ratio}",
                 fixed(*pka, 2),
@@ -113,7 +113,7 @@ pub fn species_data(plan: &Plan, curves: &Curves) -> Option<SpeciesData> {
     if curves.states.len() < 2 {
         return None;
     }
-    let ph = plan.extraction_ph;
+    let ph = ph_words(plan.extraction_ph);
     let title = format!("{} of the {} is neutral at pH {ph}", capital(&percent(target.fraction_neutral)), target.name);
     let series: Vec<(String, Vec<f64>)> =
         curves.states.iter().map(|s| (format!("charge {}", charge(s.charge)), s.fraction.clone())).collect();
@@ -124,13 +124,13 @@ pub fn species_data(plan: &Plan, curves: &Curves) -> Option<SpeciesData> {
         target.name,
         at.join(", ")
     );
-    Some(SpeciesData { title, alt, ph: curves.ph.clone(), series, own_ph: ph })
+    Some(SpeciesData { title, alt, ph: curves.ph.clone(), series, own_ph: plan.extraction_ph })
 }
 
 /// log D of the target against pH by each reading, and the log D the goal needs.
 pub fn log_d_data(study: &Study, plan: &Plan, curves: &Curves) -> Option<LogDData> {
     let target = plan.ingredients.iter().find(|i| i.is_target)?;
-    let ph = plan.extraction_ph;
+    let ph = ph_words(plan.extraction_ph);
     let needed = needed_d(study, plan).map(f64::log10);
     let series: Vec<(String, bool, Vec<f64>)> =
         curves.log_d.iter().map(|c| (c.label.clone(), c.in_use, c.log_d.clone())).collect();
@@ -153,7 +153,7 @@ pub fn log_d_data(study: &Study, plan: &Plan, curves: &Curves) -> Option<LogDDat
         if target.d > 0.0 { fixed(target.d.log10(), 2) } else { "without bound below".to_owned() },
         needed.map(|n| format!("; the goal needs {}", fixed(n, 2))).unwrap_or_default()
     );
-    Some(LogDData { title, alt, ph: curves.ph.clone(), series, own_ph: ph, needed_log_d: needed })
+    Some(LogDData { title, alt, ph: curves.ph.clone(), series, own_ph: plan.extraction_ph, needed_log_d: needed })
 }
 
 /// D with which the portions as they are would just reach the goal; clean solvent, clean draining.

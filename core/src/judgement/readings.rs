@@ -1,6 +1,6 @@
 //! Readings of a disputed constant: what each would mean for this liquid, and whether it matters.
 
-use crate::chain::{Chain, kind_words, percent};
+use crate::chain::{Chain, kind_words, percent, to_hundredths};
 use crate::judgement::uncertainty::interval;
 use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::plan::{Interval, Verdict};
@@ -146,7 +146,7 @@ pub(crate) fn report(study: &Study, chain: &Chain) -> Option<ReadingsReport> {
             }
         })
         .collect();
-    let sentence = sentence(&target.name, chain.ph, goal, &rows);
+    let sentence = sentence(&target.name, to_hundredths(chain.ph), goal, &rows);
     let decision_changes = rows.iter().any(|r| r.verdict != rows[0].verdict);
     Some(ReadingsReport { rows, decision_changes, sentence })
 }

@@ -226,12 +226,18 @@ fn feed(study: &Study, say: &mut dyn FnMut(&str, String)) {
         if ion.charge == 0 || ion.charge.abs() > 8 {
             say(
                 &format!("feed.strong_ions[{i}].charge"),
-                format!("the charge is {}; it can be −8 to −1 or 1 to 8, e.g. 1 for sodium, −1 for chloride", ion.charge),
+                format!(
+                    "the charge is {}; it can be −8 to −1 or 1 to 8, e.g. 1 for sodium, −1 for chloride",
+                    ion.charge
+                ),
             );
         }
     }
     if study.feed.strong_ions.len() > MAX_INGREDIENTS {
-        say("feed.strong_ions", format!("{} ions are listed; at most {MAX_INGREDIENTS} are handled", study.feed.strong_ions.len()));
+        say(
+            "feed.strong_ions",
+            format!("{} ions are listed; at most {MAX_INGREDIENTS} are handled", study.feed.strong_ions.len()),
+        );
     }
     match study.target() {
         None if !list.is_empty() => say(

@@ -15,7 +15,9 @@ mod visit;
 pub use bench::{Isolate, Loss, LossAmount, LossPlace, MakeUp};
 pub use check::{Problem, check, words_of};
 pub use extraction::{EnteringSolvent, Extraction, PartitionEntry, Portion, Scheme, SolventChoice};
-pub use feed::{Amount, Concentrate, ConcentrateTo, Disputed, Feed, Ingredient, MeantAs, Reading, Site, SiteKind, StrongIon};
+pub use feed::{
+    Amount, Concentrate, ConcentrateTo, Disputed, Feed, Ingredient, MeantAs, Reading, Site, SiteKind, StrongIon,
+};
 pub use quantity::{Quantity, Range};
 #[cfg(feature = "schema")]
 pub use read::schema_text;
