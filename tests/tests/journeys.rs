@@ -116,6 +116,31 @@ fn bad_input_keeps_the_text_and_the_last_good_answer() {
     });
 }
 
+/// A pH that was not measured is worked out, and the liquor's is carried on from the feed's.
+#[test]
+fn a_missing_ph_is_worked_out_from_what_is_listed() {
+    journey(Setup::default(), |page| async move {
+        let before = page.text("#feed").await?;
+        assert!(before.contains("by composition"), "{before}");
+        page.paste_at("feed.ph", "").await?;
+        // 13 mmol/L of citric acid alone; pKa 3.13: pH = (pKa − log c)/2 = 2.5, a little more.
+        let sum = page.text("#feed .step-sum").await?;
+        assert!(sum.contains("pH 2.5") && sum.contains("by composition"), "{sum}");
+        assert_eq!(page.count(".answer.stale").await?, 0);
+        page.press("Add an ion of fixed charge").await?;
+        page.type_at("feed.strong_ions[0].name", "sodium").await?;
+        page.type_at("feed.strong_ions[0].mmol_per_l", "13").await?;
+        // As monosodium citrate: pH about half the sum of the first two pKa, 3.9.
+        let sum = page.text("#feed .step-sum").await?;
+        assert!(sum.contains("pH 3.8") || sum.contains("pH 3.9"), "{sum}");
+        page.paste_at("feed.strong_ions[0].charge", "0.5").await?;
+        let problem = page.problem("feed.strong_ions[0].charge").await?;
+        assert!(problem.contains("whole number"), "{problem}");
+        assert_eq!(page.count(".answer.stale").await?, 1);
+        Ok(())
+    });
+}
+
 #[test]
 fn what_was_typed_survives_a_reload() {
     journey(Setup::default(), |page| async move {

@@ -27,9 +27,9 @@ impl Reader {
         })
     }
 
-    /// A number that may be left out.
+    /// A number that may be left out; a spread alone, as a value once typed leaves behind, is not one.
     fn optional(&mut self, text: &NumberText, path: impl Into<String>, what: &str) -> Option<Quantity> {
-        if text.is_empty() { None } else { Some(self.required(text, path, what)) }
+        if text.value.trim().is_empty() { None } else { Some(self.required(text, path, what)) }
     }
 
     /// A number that is 0 when left out.

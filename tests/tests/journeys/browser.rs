@@ -3,6 +3,7 @@
 use serde_json::json;
 use std::future::Future;
 use std::net::TcpListener;
+use std::panic::{AssertUnwindSafe, catch_unwind, resume_unwind};
 use std::path::PathBuf;
 use std::process::{Child, Command, Stdio};
 use std::time::Duration;
@@ -33,13 +34,34 @@ impl Default for Setup {
     }
 }
 
-/// chromedriver, ended with the journey.
-struct Driver(Child);
+/// chromedriver with a folder of its own for what the browser leaves behind; both end with the
+/// journey.
+struct Driver {
+    process: Child,
+    scratch: PathBuf,
+}
+
+impl Driver {
+    fn start(port: u16) -> Self {
+        let scratch = std::env::temp_dir().join(format!("unstir-journey-{port}"));
+        std::fs::create_dir_all(&scratch).expect("a scratch folder");
+        let program = std::env::var_os("CHROMEDRIVER").unwrap_or_else(|| "chromedriver".into());
+        let process = Command::new(program)
+            .arg(format!("--port={port}"))
+            .env("TMPDIR", &scratch)
+            .stdout(Stdio::null())
+            .stderr(Stdio::null())
+            .spawn()
+            .expect("chromedriver; install it or run `cargo xtask test`");
+        Self { process, scratch }
+    }
+}
 
 impl Drop for Driver {
     fn drop(&mut self) {
-        let _ = self.0.kill();
-        let _ = self.0.wait();
+        let _ = self.process.kill();
+        let _ = self.process.wait();
+        let _ = std::fs::remove_dir_all(&self.scratch);
     }
 }
 
@@ -55,27 +77,27 @@ where
     Fut: Future<Output = WebDriverResult<()>>,
 {
     let runtime = tokio::runtime::Builder::new_current_thread().enable_all().build().expect("a runtime");
-    runtime.block_on(async {
-        let port = TcpListener::bind("127.0.0.1:0").expect("a port").local_addr().expect("an address").port();
-        let program = std::env::var_os("CHROMEDRIVER").unwrap_or_else(|| "chromedriver".into());
-        let child = Command::new(program)
-            .arg(format!("--port={port}"))
-            .stdout(Stdio::null())
-            .stderr(Stdio::null())
-            .spawn()
-            .expect("chromedriver; install it or run `cargo xtask test`");
-        let _ended_with_us = Driver(child);
-        let driver = connect(port, setup).await;
-        let page = Page { driver: driver.clone() };
-        let done = match page.open().await {
-            Ok(()) => walk(page).await,
-            Err(e) => Err(e),
-        };
+    let port = TcpListener::bind("127.0.0.1:0").expect("a port").local_addr().expect("an address").port();
+    let _ended_with_us = Driver::start(port);
+    let driver = runtime.block_on(connect(port, setup));
+    let page = Page { driver: driver.clone() };
+    // A failed assertion must not leave the browser running.
+    let done = catch_unwind(AssertUnwindSafe(|| {
+        runtime.block_on(async {
+            page.open().await?;
+            walk(page).await
+        })
+    }));
+    let errors = runtime.block_on(async {
         let errors = console_errors(&driver).await;
         let _ = driver.quit().await;
-        done.expect("the journey");
-        assert!(errors.is_empty(), "the page reported: {errors:?}");
+        errors
     });
+    match done {
+        Ok(done) => done.expect("the journey"),
+        Err(failed) => resume_unwind(failed),
+    }
+    assert!(errors.is_empty(), "the page reported: {errors:?}");
 }
 
 async fn connect(port: u16, setup: Setup) -> WebDriver {
