@@ -191,6 +191,19 @@ impl Chain {
         solve_rising(1e-9, 1e9, mg, &|d| self.extracted_with(study, Some(d), None))
     }
 
+    /// Fraction of each ingredient taken out [-] with each D replaced, solvent entering clean.
+    pub fn removed_with(&self, study: &Study, d: &[f64]) -> Option<Vec<f64>> {
+        let clean = vec![0.0; d.len()];
+        let out = extract_some(study, self.charged_ml, &self.charged_mg, d, &clean, None).ok()?;
+        let taken = |i: usize| removed(self.charged_mg[i], out.raffinate_mg[i], self.charged_ml, out.liquor_ml);
+        Some((0..d.len()).map(taken).collect())
+    }
+
+    /// Constants of ingredient `i` in use at the temperature.
+    pub fn constants_of(&self, i: usize) -> &[Constant] {
+        &self.constants[i]
+    }
+
     /// Removal of the target [-] with its D replaced by `d`.
     pub fn removal_with_d(&self, study: &Study, d: f64) -> f64 {
         let i = self.target;

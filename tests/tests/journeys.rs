@@ -302,3 +302,25 @@ fn cautions_stand_beside_every_solvent() {
         Ok(())
     });
 }
+
+/// Solvents are put in order, filtered and compared; a K that is not known is not taken for 0.
+#[test]
+fn solvents_are_ranked_for_this_liquid() {
+    journey(Setup::default(), |page| async move {
+        let all = page.count(".choice").await?;
+        // Published for caffeine: about 9.5 in dichloromethane and in chloroform.
+        let first = page.text(".choice").await?;
+        assert!(first.contains("D of caffeine") && first.contains("9.4"), "{first}");
+        assert!(page.text(".choices").await?.contains("no K known"));
+        page.choose("ranking.order", "boiling").await?;
+        assert!(page.text(".choice").await?.contains("diethyl ether"));
+        page.tick("no peroxide formers").await?;
+        assert!(page.count(".choice").await? < all);
+        assert!(!page.text(".choices").await?.contains("diethyl ether"));
+        page.tick("compare toluene").await?;
+        page.tick("compare ethyl acetate").await?;
+        let table = page.text("#solvent .results table").await?;
+        assert!(table.contains("toluene") && table.contains("ethyl acetate") && table.contains("Danger"), "{table}");
+        page.picture("ranking.png").await
+    });
+}

@@ -15,7 +15,7 @@ mod text_field;
 mod working;
 
 pub use caution_box::{CautionBox, CautionText};
-pub use choice_field::ChoiceField;
+pub use choice_field::{ChoiceField, ChoiceFieldProps};
 pub use column::{Column, ColumnLevel};
 pub use data_table::DataTable;
 pub use field::field_id;

@@ -4,8 +4,8 @@ use super::bind::{Words, button, choice, number, of_draft, text, words};
 use crate::parts::{live, live_view};
 use crate::state::draft::{AmountAs, RowId};
 use crate::state::work::work;
-use crate::view_model::solvent::known_solute;
 use leptos::prelude::*;
+use unstir_core::library::solutes::solute_named;
 
 const AMOUNTS: &[(AmountAs, &str)] = &[
     (AmountAs::MgPerL, "mg per litre"),
@@ -100,7 +100,7 @@ fn FromLibrary(
     let w = work();
     let known = of_draft(move |d| {
         let i = d.ingredient(id)?;
-        if i.name.trim().is_empty() || !i.molar_mass.is_empty() { None } else { known_solute(&i.name) }
+        if i.name.trim().is_empty() || !i.molar_mass.is_empty() { None } else { solute_named(&i.name) }
     });
     move || {
         known.get().map(|solute| {

@@ -10,10 +10,11 @@ use crate::state::work::work;
 use crate::state::{Draft, NumberText};
 use crate::view_model::format::percent;
 use crate::view_model::ionisation::{d_working, log_d_data, species_data, states_head, states_rows};
-use crate::view_model::solvent::{cite, general_cautions_at, known_solute};
+use crate::view_model::solvent::{cite, general_cautions_at};
 use leptos::prelude::*;
 use unstir_core::library::cautions::CautionStep;
 use unstir_core::library::solutes;
+use unstir_core::library::solutes::solute_named;
 use unstir_core::study::SiteKind;
 
 /// Kinds of sites with their words.
@@ -179,7 +180,7 @@ fn SitesFromLibrary(
     let w = work();
     let known = of_draft(move |d| {
         let i = d.ingredient(id)?;
-        if i.sites.is_empty() && !i.disputed { known_solute(&i.name).filter(|s| !s.sites.is_empty()) } else { None }
+        if i.sites.is_empty() && !i.disputed { solute_named(&i.name).filter(|s| !s.sites.is_empty()) } else { None }
     });
     move || {
         known.get().map(|solute| {

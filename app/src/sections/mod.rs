@@ -11,6 +11,7 @@ mod isolate;
 mod make_up;
 mod partition;
 mod portions;
+mod ranking;
 mod readings;
 mod shelf;
 mod solvent;

@@ -7,8 +7,9 @@ use crate::state::draft::{ReadingDraft, RowId};
 use crate::state::work::work;
 use crate::state::{Draft, NumberText};
 use crate::view_model::ionisation::{readings_head, readings_rows};
-use crate::view_model::solvent::{cite, known_solute};
+use crate::view_model::solvent::cite;
 use leptos::prelude::*;
+use unstir_core::library::solutes::solute_named;
 use unstir_core::library::solutes::{self, Advice, readings_for};
 use unstir_core::study::MeantAs;
 
@@ -139,7 +140,7 @@ fn Published(
 ) -> impl IntoView {
     let w = work();
     let solute = of_draft(move |d| {
-        d.ingredient(id).and_then(|i| known_solute(&i.name)).map(|s| (s.id, s.name)).unwrap_or_default()
+        d.ingredient(id).and_then(|i| solute_named(&i.name)).map(|s| (s.id, s.name)).unwrap_or_default()
     });
     let list = Memo::new(move |_| solute.with(|s| if s.0.is_empty() { Vec::new() } else { readings_for(&s.0) }));
     let row = move |r: solutes::PkaReading| {

@@ -9,6 +9,7 @@ pub mod ionisation;
 pub mod isolate;
 pub mod make_up;
 pub mod portions;
+pub mod ranking;
 pub mod solvent;
 #[cfg(test)]
 mod testing;

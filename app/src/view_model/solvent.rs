@@ -6,8 +6,8 @@ use crate::state::NumberText;
 use unstir_core::library::cautions::{Caution, CautionStep, cautions_for, general_cautions, hazard_statement};
 use unstir_core::library::limits::{ExposureLimits, exposure_limits_for};
 use unstir_core::library::partition::{KBasis, published_k};
-use unstir_core::library::solutes::{Solute, solutes};
-use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent, solvents};
+use unstir_core::library::solutes::solute_named;
+use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent};
 use unstir_core::library::sources::Source;
 
 /// A solvent of the library as a row.
@@ -42,12 +42,8 @@ pub struct Fact {
     pub source: String,
 }
 
-/// Every solvent of the library, its layer told against a liquor of this density [g/mL].
-pub fn solvent_rows(liquor_density: Option<f64>) -> Vec<SolventRow> {
-    solvents().iter().map(|s| solvent_row(s, liquor_density)).collect()
-}
-
-fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRow {
+/// A solvent of the library, its layer told against a liquor of this density [g/mL].
+pub(super) fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRow {
     let statement = |code: &String| {
         let meaning = hazard_statement(code).map_or_else(|| "see the safety data sheet".to_owned(), |h| h.meaning);
         (code.clone(), meaning)
@@ -199,7 +195,7 @@ pub struct PublishedRow {
 
 /// Published K of an ingredient, known by its name, in a solvent.
 pub fn published_rows(ingredient: &str, solvent: &str) -> Vec<PublishedRow> {
-    let Some(solute) = known_solute(ingredient) else { return Vec::new() };
+    let Some(solute) = solute_named(ingredient) else { return Vec::new() };
     published_k(&solute.id, solvent)
         .into_iter()
         .map(|p| {
@@ -232,21 +228,14 @@ pub fn published_rows(ingredient: &str, solvent: &str) -> Vec<PublishedRow> {
         .collect()
 }
 
-/// The solute of the library that a name means: its own name, or the longest name within it.
-pub fn known_solute(name: &str) -> Option<Solute> {
-    let name = name.trim().to_lowercase();
-    let all = solutes();
-    let exact = all.iter().find(|s| s.name.to_lowercase() == name || s.id == name);
-    exact.or_else(|| all.iter().filter(|s| name.contains(&s.name.to_lowercase())).max_by_key(|s| s.name.len())).cloned()
-}
-
 #[cfg(test)]
 mod tests {
     use super::*;
+    use unstir_core::library::solvents::solvents;
 
     #[test]
     fn every_row_has_cautions_codes_and_facts() {
-        let rows = solvent_rows(Some(1.2));
+        let rows: Vec<SolventRow> = solvents().iter().map(|s| solvent_row(s, Some(1.2))).collect();
         assert_eq!(rows.len(), 12);
         for r in &rows {
             assert!(!r.cautions.is_empty() && !r.codes.is_empty(), "{}", r.name);
@@ -264,7 +253,6 @@ mod tests {
         assert_eq!(rows[0].text.spread, "4.6 to 10.2");
         assert!(rows[0].text.quantity("K").is_ok());
         assert!(published_rows("nothing known", "dichloromethane").is_empty());
-        assert_eq!(known_solute("Ethyl vanillin").unwrap().id, "ethyl_vanillin");
     }
 
     #[test]

@@ -1,6 +1,7 @@
-//! What the numbers mean: balance, readings of a disputed constant, uncertainty.
+//! What the numbers mean: balance, solvents compared, readings of a disputed constant, uncertainty.
 
 pub mod balance;
 pub mod explain;
+pub mod rank;
 pub mod readings;
 pub mod uncertainty;

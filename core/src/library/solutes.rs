@@ -137,6 +137,15 @@ pub fn solute(id: &str) -> Option<Solute> {
     table().items.iter().find(|solute| solute.id == id).cloned()
 }
 
+/// The solute that a name means: its own name or id, or the longest name within it.
+pub fn solute_named(name: &str) -> Option<Solute> {
+    let name = name.trim().to_lowercase();
+    let all = &table().items;
+    let exact = all.iter().find(|s| s.name.to_lowercase() == name || s.id == name);
+    let within = || all.iter().filter(|s| name.contains(&s.name.to_lowercase())).max_by_key(|s| s.name.len());
+    exact.or_else(within).cloned()
+}
+
 /// Every printed constant held, in the order of the file.
 pub fn pka_readings() -> Vec<PkaReading> {
     readings().items.clone()
@@ -321,5 +330,12 @@ mod tests {
         assert!(quinine.iter().zip([9.17, 4.54]).all(|(found, expected)| (found - expected).abs() < 1e-9));
         assert_eq!(quinine.len(), 2);
         assert_eq!(readings_for("vanillin")[0].conjugate_acid_pka(14.0), None);
+    }
+
+    #[test]
+    fn names_are_known_by_what_they_hold() {
+        assert_eq!(solute_named("Ethyl vanillin").unwrap().id, "ethyl_vanillin");
+        assert_eq!(solute_named("alkaloid (caffeine constants)").unwrap().id, "caffeine");
+        assert!(solute_named("nothing known").is_none());
     }
 }

@@ -249,6 +249,16 @@ impl Page {
         self.settle().await
     }
 
+    /// Ticks or unticks the box with these words.
+    pub async fn tick(&self, words: &str) -> WebDriverResult<()> {
+        let script = "const b = [...document.querySelectorAll('input[type=checkbox]')]\
+             .find(b => b.getAttribute('aria-label') === arguments[0] || b.parentElement.textContent.trim() === arguments[0]); \
+             if (!b) return false; b.scrollIntoView({block: 'center'}); b.click(); return true;";
+        let found = self.driver.execute(script, vec![json!(words)]).await?.json().as_bool() == Some(true);
+        assert!(found, "there is no box “{words}”");
+        self.settle().await
+    }
+
     /// The value of a script.
     pub async fn ask(&self, script: &str) -> WebDriverResult<serde_json::Value> {
         Ok(self.driver.execute(script, vec![]).await?.json().clone())
