@@ -157,7 +157,9 @@ fn parting_facts(r: &SolventRank, target: &str) -> Vec<Fact> {
     if let Some(s) = r.selectivity {
         let unknown = r.company.iter().any(|c| c.parted.is_none());
         let bound = if unknown { "at most " } else { "" };
-        list.push(fact("selectivity".into(), format!("{bound}{}", significant(s, 2)), ""));
+        // Beyond a thousand the number says no more than that.
+        let value = if s > 1000.0 { "above 1000".to_owned() } else { significant(s, 2) };
+        list.push(fact("selectivity".into(), format!("{bound}{value}"), ""));
     }
     list
 }
