@@ -125,7 +125,7 @@ fn PublishedK(
     };
     view! {
         <div class="pick" hidden=live(move || list.with(Vec::is_empty))>
-            <p class="quiet">"Published for this pair:"</p>
+            <p class="quiet">"Held for this pair:"</p>
             <ul>{live_view(move || list.get().into_iter().map(row).collect_view())}</ul>
         </div>
     }

@@ -45,52 +45,54 @@ pub fn Ranking() -> impl IntoView {
         problem: Signal::stored(None),
     });
     view! {
-        <h3 id="solvents">"Solvents of the library, for this liquor and this scheme"</h3>
-        <div class="fields">
-            {order}
-            <div class="field field-text">
-                <label class="field-label" for="ranking-words">"show only rows with these words"</label>
-                <input
-                    id="ranking-words"
-                    type="search"
-                    autocomplete="off"
-                    prop:value=live(move || wish.with(|w| w.words.clone()))
-                    on:input=move |e| wish.update(|w| w.words = event_target_value(&e))
-                />
+        <div class="ranking">
+            <h3 id="solvents">"Solvents of the library, for this liquor and this scheme"</h3>
+            <div class="fields">
+                {order}
+                <div class="field field-text">
+                    <label class="field-label" for="ranking-words">"show only rows with these words"</label>
+                    <input
+                        id="ranking-words"
+                        type="search"
+                        autocomplete="off"
+                        prop:value=live(move || wish.with(|w| w.words.clone()))
+                        on:input=move |e| wish.update(|w| w.words = event_target_value(&e))
+                    />
+                </div>
             </div>
-        </div>
-        <div class="checks">
-            {tick("layers differ by 0.05 g/mL or more", wish, |w| &mut w.parts)}
-            {tick("no peroxide formers", wish, |w| &mut w.no_peroxides)}
-            {tick("none classed for cancer, heredity or reproduction", wish, |w| &mut w.no_lasting_harm)}
-        </div>
-        <p class="quiet">
-            {live(move || {
-                let (shown, of) = (rows.with(Vec::len), all.with(Vec::len));
-                format!("{shown} of {of} shown. A K that is not known is not taken to be 0: measure it with one portion of a 10 mL sample.")
-            })}
-        </p>
-        <Results there=Signal::derive(move || pair.with(|p| !p.0.is_empty()))>
-            <DataTable
-                caption=Signal::stored("Compared".to_owned())
-                head=Signal::derive(move || pair.with(|p| p.0.clone()))
-                rows=Signal::derive(move || pair.with(|p| p.1.clone()))
+            <div class="checks">
+                {tick("layers differ by 0.05 g/mL or more", wish, |w| &mut w.parts)}
+                {tick("no peroxide formers", wish, |w| &mut w.no_peroxides)}
+                {tick("none classed for cancer, heredity or reproduction", wish, |w| &mut w.no_lasting_harm)}
+            </div>
+            <p class="quiet">
+                {live(move || {
+                    let (shown, of) = (rows.with(Vec::len), all.with(Vec::len));
+                    format!("{shown} of {of} shown. A K that is not known is not taken to be 0: measure it with one portion of a 10 mL sample.")
+                })}
+            </p>
+            <Results there=Signal::derive(move || pair.with(|p| !p.0.is_empty()))>
+                <DataTable
+                    caption=Signal::stored("Compared".to_owned())
+                    head=Signal::derive(move || pair.with(|p| p.0.clone()))
+                    rows=Signal::derive(move || pair.with(|p| p.1.clone()))
+                />
+            </Results>
+            <Working
+                title="the ranking"
+                lines=Signal::stored(
+                    vec![
+                        "D = K·f_N + K_ip·(1 − f_N) at the liquor's pH, for each ingredient".to_owned(),
+                        "taken out: D run through the portions or stages above, fresh solvent".to_owned(),
+                        "selectivity = D of the target / largest known D of the company".to_owned(),
+                    ],
+                )
+                reference="definitions; K as entered for the pair, else the published value held in the library, else a linear free-energy estimate (M. H. Abraham et al., J. Pharm. Sci. 99 (2010) 1500)"
+                validity="as for the portions; an ingredient without a K has no part in the selectivity, which is then an upper bound"
             />
-        </Results>
-        <Working
-            title="the ranking"
-            lines=Signal::stored(
-                vec![
-                    "D = K·f_N + K_ip·(1 − f_N) at the liquor's pH, for each ingredient".to_owned(),
-                    "taken out: D run through the portions or stages above, fresh solvent".to_owned(),
-                    "selectivity = D of the target / largest known D of the company".to_owned(),
-                ],
-            )
-            reference="definitions; K as entered for the pair, else the published value held in the library"
-            validity="as for the portions; an ingredient without a K has no part in the selectivity, which is then an upper bound"
-        />
-        <div class="choices">
-            {live_view(move || rows.get().into_iter().map(|row| view! { <Choice row picked/> }).collect_view())}
+            <div class="choices">
+                {live_view(move || rows.get().into_iter().map(|row| view! { <Choice row picked/> }).collect_view())}
+            </div>
         </div>
     }
 }

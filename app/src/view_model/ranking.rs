@@ -125,6 +125,7 @@ fn origin_words(p: &Parted) -> &'static str {
         KOrigin::Entered => "K as entered",
         KOrigin::Published => "K published",
         KOrigin::PublishedWeak => "K published, weak",
+        KOrigin::Estimated => "K estimated",
     }
 }
 

@@ -9,6 +9,7 @@ use unstir_core::library::partition::{KBasis, published_k};
 use unstir_core::library::solutes::solute_named;
 use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent};
 use unstir_core::library::sources::Source;
+use unstir_core::partition::estimate::estimated_k;
 
 /// A solvent of the library as a row.
 #[derive(Clone, Debug, PartialEq)]
@@ -193,39 +194,54 @@ pub struct PublishedRow {
     pub text: NumberText,
 }
 
-/// Published K of an ingredient, known by its name, in a solvent.
+/// Published K of an ingredient, known by its name, in a solvent, and an estimate after them.
 pub fn published_rows(ingredient: &str, solvent: &str) -> Vec<PublishedRow> {
     let Some(solute) = solute_named(ingredient) else { return Vec::new() };
-    published_k(&solute.id, solvent)
-        .into_iter()
-        .map(|p| {
-            let mut words = format!("K {}", significant(p.k, 3));
-            let mut spread = String::new();
-            if let (Some(low), Some(high)) = (p.k_low, p.k_high) {
-                words.push_str(&format!(" ({}–{})", significant(low, 3), significant(high, 3)));
-                spread = format!("{low} to {high}");
-            }
-            match (p.temperature_low_c, p.temperature_high_c) {
-                (Some(a), Some(b)) if a == b => words.push_str(&format!(", {a} °C")),
-                (Some(a), Some(b)) => words.push_str(&format!(", {a}–{b} °C")),
-                _ => words.push_str(", temperature not stated"),
-            }
-            words.push_str(&format!(", {}", p.form));
-            words.push_str(match p.basis {
-                KBasis::Neutral => "",
-                KBasis::Monomer => ", undimerised form",
-                KBasis::SolubilityRatio => ", a ratio of two solubilities",
-            });
-            if p.weak {
-                words.push_str(", weak");
-            }
-            if !p.note.is_empty() {
-                words.push_str(&format!(". {}", capital(&p.note)));
-            }
-            let source = cite(&p.source);
-            PublishedRow { words, text: NumberText { value: p.k.to_string(), spread, source: source.clone() }, source }
-        })
-        .collect()
+    let estimate = estimated_k(&solute.id, solvent).map(|e| {
+        let words = format!(
+            "K {} ({}–{}), estimated, neutral form, 25 °C: measure it before you rely on it",
+            significant(e.k, 2),
+            significant(e.k_low, 2),
+            significant(e.k_high, 2)
+        );
+        // As a standard uncertainty of K itself: the first term of the exponential.
+        let u = e.k * std::f64::consts::LN_10 * e.standard_error;
+        let text = NumberText { value: digits(e.k), spread: digits(u), source: e.source.clone() };
+        PublishedRow { words, text, source: e.source }
+    });
+    let published = published_k(&solute.id, solvent).into_iter().map(|p| {
+        let mut words = format!("K {}", significant(p.k, 3));
+        let mut spread = String::new();
+        if let (Some(low), Some(high)) = (p.k_low, p.k_high) {
+            words.push_str(&format!(" ({}–{})", significant(low, 3), significant(high, 3)));
+            spread = format!("{low} to {high}");
+        }
+        match (p.temperature_low_c, p.temperature_high_c) {
+            (Some(a), Some(b)) if a == b => words.push_str(&format!(", {a} °C")),
+            (Some(a), Some(b)) => words.push_str(&format!(", {a}–{b} °C")),
+            _ => words.push_str(", temperature not stated"),
+        }
+        words.push_str(&format!(", {}", p.form));
+        words.push_str(match p.basis {
+            KBasis::Neutral => "",
+            KBasis::Monomer => ", undimerised form",
+            KBasis::SolubilityRatio => ", a ratio of two solubilities",
+        });
+        if p.weak {
+            words.push_str(", weak");
+        }
+        if !p.note.is_empty() {
+            words.push_str(&format!(". {}", capital(&p.note)));
+        }
+        let source = cite(&p.source);
+        PublishedRow { words, text: NumberText { value: p.k.to_string(), spread, source: source.clone() }, source }
+    });
+    published.chain(estimate).collect()
+}
+
+/// A number with two digits, as it would be typed.
+fn digits(value: f64) -> String {
+    format!("{value:.1e}").parse::<f64>().unwrap_or(value).to_string()
 }
 
 #[cfg(test)]
@@ -252,6 +268,10 @@ mod tests {
         assert_eq!(rows[0].text.value, "9.5");
         assert_eq!(rows[0].text.spread, "4.6 to 10.2");
         assert!(rows[0].text.quantity("K").is_ok());
+        // Estimated for dichloromethane: log K 0.628 (by hand from the coefficients), so 4.2.
+        let last = rows.last().unwrap();
+        assert_eq!(last.text.value, "4.2");
+        assert!(last.words.contains("estimated") && last.text.quantity("K").is_ok());
         assert!(published_rows("nothing known", "dichloromethane").is_empty());
     }
 

@@ -5,6 +5,7 @@ use crate::library::partition::{KBasis, PublishedK, published_k};
 use crate::library::solutes::solute_named;
 use crate::library::solvents::{Layer, Solvent, solvents};
 use crate::partition::distribution::{Partition, distribution_ratio, partition_at};
+use crate::partition::estimate::estimated_k;
 use crate::process::concentrate::density_g_per_ml;
 use crate::study::{PartitionEntry, Problem, Study};
 use serde::Serialize;
@@ -19,6 +20,8 @@ pub enum KOrigin {
     Published,
     /// Published, but of low confidence.
     PublishedWeak,
+    /// Estimated; see [`crate::partition::estimate`].
+    Estimated,
 }
 
 /// How one ingredient would part between the liquor and a solvent.
@@ -67,7 +70,8 @@ pub struct CompanyParted {
 }
 
 /// K of an ingredient in a solvent with its origin and source: what the study states for the pair,
-/// else the best published value: of the neutral form, not weak, the first listed.
+/// else the best published value (of the neutral form, not weak, the first listed), else an
+/// estimate.
 fn k_for(study: &Study, ingredient: &str, solvent: &str) -> Option<(Partition, KOrigin, String)> {
     let t = study.feed.temperature_c.value;
     let stated = |p: &&PartitionEntry| p.ingredient == ingredient && p.solvent == solvent;
@@ -75,9 +79,14 @@ fn k_for(study: &Study, ingredient: &str, solvent: &str) -> Option<(Partition, K
         let source = entry.k_neutral.source.clone();
         return Some((partition_at(Some(entry), t), KOrigin::Entered, source));
     }
-    let rows = published_k(&solute_named(ingredient)?.id, solvent);
+    let solute = solute_named(ingredient)?;
+    let rows = published_k(&solute.id, solvent);
     let rank = |r: &PublishedK| (r.weak, r.basis == KBasis::SolubilityRatio);
-    let best = rows.iter().min_by_key(|r| rank(r))?;
+    let Some(best) = rows.iter().min_by_key(|r| rank(r)) else {
+        let estimate = estimated_k(&solute.id, solvent)?;
+        let k = Partition { k_neutral: estimate.k, k_ion_pair: 0.0 };
+        return Some((k, KOrigin::Estimated, estimate.source));
+    };
     let origin = if best.weak { KOrigin::PublishedWeak } else { KOrigin::Published };
     Some((Partition { k_neutral: best.k, k_ion_pair: 0.0 }, origin, best.source.citation.clone()))
 }
@@ -179,6 +188,8 @@ mod tests {
         let list = rank(&study).unwrap();
         assert_eq!(list.len(), solvents().len());
         let d = |id: &str| list.iter().find(|r| r.id == id).unwrap().target.clone();
+        let butyl = d("n_butyl_acetate").unwrap();
+        assert_eq!(butyl.origin, KOrigin::Estimated);
         let chloroform = d("chloroform").unwrap();
         assert!(chloroform.d > 8.0 && chloroform.origin == KOrigin::Published);
         let unknown = list.iter().position(|r| r.target.is_none()).unwrap();

@@ -10,6 +10,7 @@
 //! | cautions for the bench; what a hazard code means | [`cautions`] | `cautions.csv`, `hazard_statements.csv` |
 //! | published partition coefficients | [`partition`] | `partition.csv` |
 //! | solutes, their sites, and printed readings of their constants | [`solutes`] | `solutes.csv`, `pka_readings.csv` |
+//! | coefficients and descriptors of the free-energy estimate of K | [`free_energy`] | `free_energy_systems.csv`, `descriptors.csv` |
 //! | Debye–Hückel constant against temperature | [`activity`] | `activity_constants.csv` |
 //! | what a source is and how far it was checked | [`sources`] | `sources.csv` |
 //!
@@ -19,6 +20,7 @@
 
 pub mod activity;
 pub mod cautions;
+pub mod free_energy;
 pub mod limits;
 pub mod partition;
 pub mod solutes;

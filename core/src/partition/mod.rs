@@ -1,3 +1,4 @@
 //! How an ingredient divides between liquor and solvent.
 
 pub mod distribution;
+pub mod estimate;
