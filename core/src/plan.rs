@@ -13,6 +13,7 @@ use crate::process::concentrate::Liquor;
 use crate::process::isolate::{self, IsolateResult};
 use crate::process::make_up::MakeUpPlan;
 use crate::process::portions::StageRow;
+use crate::process::strip::StripPlan;
 use crate::solution::dose::Dose;
 use crate::solution::ionisation::{Constant, constants_in_use, constants_of, speciate};
 use crate::study::{Problem, Study, check, words_of};
@@ -218,6 +219,9 @@ pub struct Plan {
     pub isolate: Option<IsolateResult>,
     /// Bringing the raffinate to strength.
     pub make_up: MakeUpPlan,
+    /// Stripping; none for a solvent that the library does not hold.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub strip: Option<StripPlan>,
     /// Every ingredient in every stream.
     pub balance: Balance,
     /// What the uncertainty of the planned removal is made of, largest first.
@@ -316,6 +320,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         levels: chain.levels(study),
         inverse,
         isolate,
+        strip: chain.strip(study),
         make_up: chain.make_up(study),
         balance: chain.balance.clone(),
         contributions,

@@ -141,6 +141,36 @@ fn a_missing_ph_is_worked_out_from_what_is_listed() {
     });
 }
 
+/// Assays while stripping give the time to a residue; nothing on the page says what it permits.
+#[test]
+fn stripping_is_followed_to_a_residue() {
+    journey(Setup::default(), |page| async move {
+        let strip = page.text("#strip").await?;
+        for words in ["times as volatile as water", "check the current law", "2 mg/kg in roasted coffee"] {
+            assert!(strip.contains(words), "no {words} in {strip}");
+        }
+        for (i, (minutes, content)) in [("0", "1000"), ("10", "100"), ("20", "10")].into_iter().enumerate() {
+            page.press("Add an assay").await?;
+            page.type_at(&format!("strip.readings[{i}].minutes"), minutes).await?;
+            page.type_at(&format!("strip.readings[{i}].mg_per_l"), content).await?;
+        }
+        // Tenfold every 10 min; 0.2 mg/L in 480 mL is 1 mg/L in 96 mL: 30 min.
+        page.type_at("strip.limit_mg_per_l", "0.2").await?;
+        let table = page.text("#strip table").await?;
+        assert!(table.contains("as entered") && table.contains("30 (30–30)"), "{table}");
+        page.paste_at("strip.pressure_kpa", "0").await?;
+        assert!(page.problem("strip.pressure_kpa").await?.contains("0.1"));
+        page.paste_at("strip.pressure_kpa", "5").await?;
+        // Steam tables: 32.88 °C at 5 kPa.
+        assert!(page.text("#strip").await?.contains("33 °C"));
+        page.choose("goal.purpose", "medicine").await?;
+        assert!(page.text("#strip").await?.contains("600 ppm"));
+        page.choose("goal.purpose", "technical").await?;
+        assert!(!page.text("#strip").await?.contains("As listed in"));
+        page.picture("strip.png").await
+    });
+}
+
 #[test]
 fn what_was_typed_survives_a_reload() {
     journey(Setup::default(), |page| async move {

@@ -119,7 +119,8 @@ prop_compose! {
             unstir_study: 1,
             name: "any".into(),
             note: String::new(),
-            goal: Goal { removal_fraction: 0.9.into() },
+            goal: Goal { removal_fraction: 0.9.into(), purpose: Default::default() },
+            strip: Default::default(),
             feed: Feed {
                 volume_ml: volume_ml.clone(),
                 ph: Some(ph),

@@ -1,6 +1,6 @@
 //! Feed: the liquid as received, its ingredients, and taking water off.
 
-use super::bind::{button, choice_of, fixed_number, hinted, number, of_draft, of_plan, text, words};
+use super::bind::{button, choice, choice_of, fixed_number, hinted, number, of_draft, of_plan, text, words};
 use super::concentrate::ConcentrateFields;
 use super::ingredient::IngredientFields;
 use super::step::{Cautions, Step};
@@ -11,6 +11,14 @@ use crate::view_model::feed::{acidity_working, feed_line};
 use crate::view_model::solvent::general_cautions_at;
 use leptos::prelude::*;
 use unstir_core::library::cautions::CautionStep;
+use unstir_core::study::Purpose;
+
+const PURPOSES: &[(Purpose, &str)] = &[
+    (Purpose::DrinkOrFood, "drink or food"),
+    (Purpose::Flavour, "flavour"),
+    (Purpose::Medicine, "medicine"),
+    (Purpose::Technical, "technical"),
+];
 
 /// The step.
 #[component]
@@ -51,6 +59,13 @@ pub fn Feed() -> impl IntoView {
                     |d| &mut d.feed.brix,
                 )}
                 {target}
+                {choice(
+                    "what it is for",
+                    |_| "goal.purpose".to_owned(),
+                    PURPOSES,
+                    |d| Some(d.purpose),
+                    |d, purpose| d.purpose = purpose,
+                )}
                 {fixed_number(
                     hinted("removal to reach", "", "a fraction, 0.9 for 90 %"),
                     "goal.removal_fraction",

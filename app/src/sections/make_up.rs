@@ -29,7 +29,7 @@ pub fn MakeUpStep() -> impl IntoView {
     let sum = of_plan(|g| format!("{} restores strength", measured(&g.plan.headline.make_up_volume_ml).line()));
     let advice = of_plan(|g| g.plan.make_up.advice.clone());
     let solvent = of_draft(|d| d.solvent.id.clone());
-    let cautions = Memo::new(move |_| solvent.with(|s| cautions_at(&[CautionStep::Strip, CautionStep::MakeUp], s)));
+    let cautions = Memo::new(move |_| solvent.with(|s| cautions_at(&[CautionStep::MakeUp], s)));
     view! {
         <Step id="make-up" name="Make-up" sum=sum>
             <p class="quiet">

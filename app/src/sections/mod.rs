@@ -16,6 +16,7 @@ mod readings;
 mod shelf;
 mod solvent;
 mod step;
+mod strip;
 
 use crate::browser::storage::Store;
 use crate::parts::Column;
@@ -47,6 +48,7 @@ pub fn App() -> impl IntoView {
                     <solvent::SolventStep/>
                     <portions::Portions/>
                     <isolate::IsolateStep/>
+                    <strip::StripStep/>
                     <make_up::MakeUpStep/>
                     <balance::BalanceStep/>
                 </main>

@@ -5,7 +5,7 @@
 
 use super::NumberText;
 use serde::{Deserialize, Serialize};
-use unstir_core::study::{LossPlace, MeantAs, SiteKind};
+use unstir_core::study::{LossPlace, MeantAs, Purpose, SiteKind};
 
 /// Version of the draft as saved in the browser.
 pub const DRAFT_VERSION: u32 = 1;
@@ -26,6 +26,9 @@ pub struct Draft {
     pub note: String,
     /// Least fraction of the target to take out.
     pub goal: NumberText,
+    /// What the liquid is for.
+    #[serde(default)]
+    pub purpose: Purpose,
     /// The liquid as received.
     pub feed: FeedDraft,
     /// Target and company.
@@ -40,6 +43,9 @@ pub struct Draft {
     pub extraction: ExtractionDraft,
     /// The isolate, once weighed.
     pub isolate: IsolateDraft,
+    /// Stripping the raffinate.
+    #[serde(default)]
+    pub strip: StripDraft,
     /// Losses.
     pub losses: Vec<LossDraft>,
     /// Volume reached at make-up, once done.
@@ -290,6 +296,30 @@ pub struct IsolateDraft {
     pub residual_solvent: NumberText,
 }
 
+/// Stripping, as typed.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct StripDraft {
+    /// Pressure [kPa]; optional.
+    pub pressure: NumberText,
+    /// Assays on the way.
+    pub readings: Vec<StripReadingDraft>,
+    /// Residue to reach in the made-up liquid [mg/L]; optional.
+    pub limit: NumberText,
+    /// Serving [mL]; optional.
+    pub serving: NumberText,
+}
+
+/// One assay, as typed.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct StripReadingDraft {
+    /// Row id.
+    pub id: RowId,
+    /// Time [min].
+    pub minutes: NumberText,
+    /// Content [mg/L].
+    pub content: NumberText,
+}
+
 /// How a loss is stated.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq, Serialize, Deserialize)]
 #[serde(rename_all = "snake_case")]
@@ -350,6 +380,8 @@ impl Draft {
             partition: Vec::new(),
             extraction: ExtractionDraft::default(),
             isolate: IsolateDraft::default(),
+            purpose: Purpose::default(),
+            strip: StripDraft::default(),
             losses: Vec::new(),
             made_up_to: NumberText::default(),
         }

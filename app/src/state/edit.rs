@@ -146,6 +146,12 @@ impl Draft {
         });
     }
 
+    /// Adds an assay of the raffinate while it is stripped.
+    pub fn add_strip_reading(&mut self) {
+        let id = self.new_id();
+        self.strip.readings.push(StripReadingDraft { id, ..StripReadingDraft::default() });
+    }
+
     /// Adds an ion of fixed charge.
     pub fn add_ion(&mut self) {
         let id = self.new_id();
@@ -229,6 +235,7 @@ impl Draft {
         self.extraction.entering.iter_mut().for_each(|e| f(&mut e.id));
         self.losses.iter_mut().for_each(|l| f(&mut l.id));
         self.feed.ions.iter_mut().for_each(|i| f(&mut i.id));
+        self.strip.readings.iter_mut().for_each(|r| f(&mut r.id));
     }
 
     /// Takes a solvent: its id, name and density.

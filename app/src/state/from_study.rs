@@ -2,7 +2,7 @@
 
 use super::draft::*;
 use super::number_text::NumberText;
-use unstir_core::study::{Amount, ConcentrateTo, Ingredient, LossAmount, Scheme, Study};
+use unstir_core::study::{Amount, ConcentrateTo, Ingredient, LossAmount, Scheme, Strip, Study};
 
 impl Draft {
     /// The draft that reads back as `study`.
@@ -11,6 +11,8 @@ impl Draft {
         d.name = study.name.clone();
         d.note = study.note.clone();
         d.goal = NumberText::from_quantity(&study.goal.removal_fraction);
+        d.purpose = study.goal.purpose;
+        d.take_strip(&study.strip);
         d.feed.volume = NumberText::from_quantity(&study.feed.volume_ml);
         d.feed.ph = NumberText::from_optional(study.feed.ph.as_ref());
         d.feed.co2 = NumberText::from_optional(study.feed.co2_g_per_l.as_ref());
@@ -93,6 +95,24 @@ impl Draft {
         };
         let ph_after = NumberText::from_optional(study.concentrate.ph_after.as_ref());
         self.concentrate = ConcentrateDraft { by, to, ph_after };
+    }
+
+    fn take_strip(&mut self, strip: &Strip) {
+        let readings = strip
+            .readings
+            .iter()
+            .map(|r| StripReadingDraft {
+                id: self.new_id(),
+                minutes: NumberText::from_quantity(&r.minutes),
+                content: NumberText::from_quantity(&r.mg_per_l),
+            })
+            .collect();
+        self.strip = StripDraft {
+            pressure: NumberText::from_optional(strip.pressure_kpa.as_ref()),
+            readings,
+            limit: NumberText::from_optional(strip.limit_mg_per_l.as_ref()),
+            serving: NumberText::from_optional(strip.serving_ml.as_ref()),
+        };
     }
 
     fn take_partition(&mut self, study: &Study) {
@@ -185,7 +205,7 @@ fn temperature(t: f64) -> String {
 mod tests {
     use super::super::demos::DEMOS;
     use super::*;
-    use unstir_core::study::{Quantity, StrongIon, parse};
+    use unstir_core::study::{Purpose, Quantity, StripReading, StrongIon, parse};
 
     #[test]
     fn every_demo_survives_as_text() {
@@ -212,6 +232,11 @@ mod tests {
         study.make_up.made_up_to_ml = Some(500.0.into());
         study.concentrate.ph_after = Some(3.3.into());
         study.feed.co2_g_per_l = Some(5.0.into());
+        study.goal.purpose = Purpose::Medicine;
+        study.strip.pressure_kpa = Some(20.0.into());
+        study.strip.serving_ml = Some(250.0.into());
+        study.strip.limit_mg_per_l = Some(0.5.into());
+        study.strip.readings.push(StripReading { minutes: 5.0.into(), mg_per_l: Quantity::with_u(12.0, 0.5) });
         study.feed.strong_ions.push(StrongIon { name: "chloride".into(), charge: -1, mmol_per_l: 12.0.into() });
         assert_eq!(Draft::from_study(&study).to_study(), Ok(study));
     }

@@ -4,8 +4,8 @@ use super::draft::*;
 use super::number_text::{NumberText, number};
 use unstir_core::study::{
     Amount, Concentrate, ConcentrateTo, Disputed, EnteringSolvent, Extraction, Feed, Goal, Ingredient, Isolate, Loss,
-    LossAmount, MakeUp, PartitionEntry, Portion, Problem, Quantity, Reading, Scheme, Site, SolventChoice, StrongIon,
-    Study, VERSION, check,
+    LossAmount, MakeUp, PartitionEntry, Portion, Problem, Quantity, Reading, Scheme, Site, SolventChoice, Strip,
+    StripReading, StrongIon, Study, VERSION, check,
 };
 
 /// Reads the numbers of a draft and notes each text that is no number.
@@ -87,7 +87,10 @@ impl Draft {
             unstir_study: VERSION,
             name: self.name.clone(),
             note: self.note.clone(),
-            goal: Goal { removal_fraction: r.required(&self.goal, "goal.removal_fraction", "removal to reach") },
+            goal: Goal {
+                removal_fraction: r.required(&self.goal, "goal.removal_fraction", "removal to reach"),
+                purpose: self.purpose,
+            },
             feed: self.read_feed(&mut r),
             concentrate: self.read_concentrate(&mut r),
             solvent: SolventChoice {
@@ -98,6 +101,7 @@ impl Draft {
             partition: self.read_partition(&mut r),
             extraction: self.read_extraction(&mut r),
             isolate: self.isolate.weighed.then(|| read_isolate(&self.isolate, &mut r)),
+            strip: read_strip(&self.strip, &mut r),
             losses: self.losses.iter().enumerate().map(|(i, l)| read_loss(l, i, &mut r)).collect(),
             make_up: MakeUp { made_up_to_ml: r.optional(&self.made_up_to, "make_up.made_up_to_ml", "made-up volume") },
         };
@@ -303,6 +307,24 @@ fn read_isolate(i: &IsolateDraft, r: &mut Reader) -> Isolate {
             "isolate.residual_solvent_fraction",
             "solvent in the isolate",
         ),
+    }
+}
+
+fn read_strip(s: &StripDraft, r: &mut Reader) -> Strip {
+    let readings = s
+        .readings
+        .iter()
+        .enumerate()
+        .map(|(i, x)| StripReading {
+            minutes: r.required(&x.minutes, format!("strip.readings[{i}].minutes"), "time"),
+            mg_per_l: r.required(&x.content, format!("strip.readings[{i}].mg_per_l"), "content"),
+        })
+        .collect();
+    Strip {
+        pressure_kpa: r.optional(&s.pressure, "strip.pressure_kpa", "pressure"),
+        readings,
+        limit_mg_per_l: r.optional(&s.limit, "strip.limit_mg_per_l", "residue to reach"),
+        serving_ml: r.optional(&s.serving, "strip.serving_ml", "serving"),
     }
 }
 

@@ -83,6 +83,8 @@ pub fn step_of(path: &str) -> (&'static str, &'static str) {
         ("portions", "Portions")
     } else if starts("isolate") {
         ("isolate", "Isolate")
+    } else if starts("strip") {
+        ("strip", "Strip")
     } else if starts("losses") || starts("make_up") {
         ("make-up", "Make-up")
     } else if starts("ingredients") {

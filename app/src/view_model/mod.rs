@@ -11,5 +11,6 @@ pub mod make_up;
 pub mod portions;
 pub mod ranking;
 pub mod solvent;
+pub mod strip;
 #[cfg(test)]
 mod testing;

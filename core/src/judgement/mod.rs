@@ -2,6 +2,7 @@
 
 pub mod balance;
 pub mod explain;
+pub mod line;
 pub mod rank;
 pub mod readings;
 pub mod uncertainty;

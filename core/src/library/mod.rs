@@ -8,6 +8,7 @@
 //! | solvents: density, solubility, fire, peroxides, hazard codes | [`solvents`] | `solvents.csv` |
 //! | exposure limits of the solvents | [`limits`] | `exposure_limits.csv` |
 //! | cautions for the bench; what a hazard code means | [`cautions`] | `cautions.csv`, `hazard_statements.csv` |
+//! | limits of what stays of a solvent, as listed | [`residual`] | `residual_limits.csv` |
 //! | published partition coefficients | [`partition`] | `partition.csv` |
 //! | solutes, their sites, and printed readings of their constants | [`solutes`] | `solutes.csv`, `pka_readings.csv` |
 //! | coefficients and descriptors of the free-energy estimate of K | [`free_energy`] | `free_energy_systems.csv`, `descriptors.csv` |
@@ -23,6 +24,7 @@ pub mod cautions;
 pub mod free_energy;
 pub mod limits;
 pub mod partition;
+pub mod residual;
 pub mod solutes;
 pub mod solvents;
 pub mod sources;

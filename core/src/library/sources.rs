@@ -107,7 +107,7 @@ mod tests {
     use super::*;
 
     /// Every table that names sources.
-    const TABLES: [&str; 10] = [
+    const TABLES: [&str; 11] = [
         include_str!("../../data/solvents.csv"),
         include_str!("../../data/exposure_limits.csv"),
         include_str!("../../data/hazard_statements.csv"),
@@ -118,6 +118,7 @@ mod tests {
         include_str!("../../data/activity_constants.csv"),
         include_str!("../../data/free_energy_systems.csv"),
         include_str!("../../data/descriptors.csv"),
+        include_str!("../../data/residual_limits.csv"),
     ];
 
     /// The whole library travels in the one-file page, whose size is bounded.

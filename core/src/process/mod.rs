@@ -6,3 +6,5 @@ pub mod counter_current;
 pub mod isolate;
 pub mod make_up;
 pub mod portions;
+pub mod strip;
+pub mod vapour;

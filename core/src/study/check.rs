@@ -34,6 +34,8 @@ impl std::error::Error for Problem {}
 pub const MAX_INGREDIENTS: usize = 64;
 /// Largest number of portions or stages in a study.
 pub const MAX_STAGES: usize = 100;
+/// Largest number of readings of a strip.
+pub const MAX_READINGS: usize = 200;
 /// Largest partition coefficient accepted [-]; log K above 12 has not been measured.
 pub const MAX_K: f64 = 1e12;
 
@@ -54,6 +56,10 @@ pub fn check(study: &Study) -> Vec<Problem> {
     partition(study, &mut say);
     extraction(study, &mut say);
     bench(study, &mut say);
+    if study.strip.readings.len() > MAX_READINGS {
+        let n = study.strip.readings.len();
+        say("strip.readings", format!("{n} readings are listed; at most {MAX_READINGS} are handled"));
+    }
     found
 }
 
@@ -82,6 +88,12 @@ fn allowed(path: &str) -> Allowed {
         "volume_ml" => a("the volume", "mL", 0.0, false, 1e6, "give the volume in millilitres"),
         "solvent_ml" => a("the solvent volume", "mL", 0.0, false, 1e6, "give the volume in millilitres"),
         "vessel_ml" => a("the largest vessel", "mL", 0.0, false, 1e6, "give its volume in millilitres"),
+        "pressure_kpa" => a("the pressure", "kPa", 0.1, true, 1000.0, "the atmosphere has about 101 kPa"),
+        "minutes" => a("the time", "min", 0.0, true, 1e5, "count from when stripping began"),
+        "mg_per_l" if path.starts_with("strip") => {
+            a("the content", "mg/L", 0.0, true, 1e6, "where nothing was found, enter the detection limit")
+        }
+        "limit_mg_per_l" => a("the residue to reach", "mg/L", 0.0, false, 1e6, "check the unit"),
         "serving_ml" => a("the serving", "mL", 0.0, false, 1e5, "give the volume on the label"),
         "made_up_to_ml" => a("the made-up volume", "mL", 0.0, false, 1e6, "leave it empty until it is done"),
         "ph" | "ph_after" => a("pH", "", -2.0, true, 16.0, "check the reading"),

@@ -10,8 +10,10 @@ mod extraction;
 mod feed;
 mod quantity;
 mod read;
+mod strip;
 mod visit;
 
+pub use crate::library::residual::Purpose;
 pub use bench::{Isolate, Loss, LossAmount, LossPlace, MakeUp};
 pub use check::{Problem, check, words_of};
 pub use extraction::{EnteringSolvent, Extraction, PartitionEntry, Portion, Scheme, SolventChoice};
@@ -22,6 +24,7 @@ pub use quantity::{Quantity, Range};
 #[cfg(feature = "schema")]
 pub use read::schema_text;
 pub use read::{MAX_FILE_BYTES, parse, to_text};
+pub use strip::{Strip, StripReading};
 pub use visit::for_each_quantity;
 
 use serde::{Deserialize, Serialize};
@@ -58,6 +61,9 @@ pub struct Study {
     /// What was weighed after evaporating the extract.
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub isolate: Option<Isolate>,
+    /// Stripping the raffinate.
+    #[serde(default, skip_serializing_if = "is_unstated")]
+    pub strip: Strip,
     /// Liquid that did not reach the end.
     #[serde(default)]
     pub losses: Vec<Loss>,
@@ -73,6 +79,13 @@ pub struct Study {
 pub struct Goal {
     /// Least fraction of the target to take out, 0 to 1.
     pub removal_fraction: Quantity,
+    /// What the liquid is for: which lists of residual limits are looked at.
+    #[serde(default)]
+    pub purpose: Purpose,
+}
+
+fn is_unstated(strip: &Strip) -> bool {
+    *strip == Strip::default()
 }
 
 impl Study {

@@ -80,6 +80,13 @@ pub fn for_each_quantity(study: &mut Study, f: &mut dyn FnMut(&str, &mut Quantit
         f("isolate.hydrate_waters", &mut i.hydrate_waters);
         f("isolate.residual_solvent_fraction", &mut i.residual_solvent_fraction);
     }
+    maybe("strip.pressure_kpa", &mut study.strip.pressure_kpa, f);
+    for (i, r) in study.strip.readings.iter_mut().enumerate() {
+        f(&format!("strip.readings[{i}].minutes"), &mut r.minutes);
+        f(&format!("strip.readings[{i}].mg_per_l"), &mut r.mg_per_l);
+    }
+    maybe("strip.limit_mg_per_l", &mut study.strip.limit_mg_per_l, f);
+    maybe("strip.serving_ml", &mut study.strip.serving_ml, f);
     for (i, l) in study.losses.iter_mut().enumerate() {
         match &mut l.amount {
             LossAmount::Fraction(q) => f(&format!("losses[{i}].amount.fraction"), q),
