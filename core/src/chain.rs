@@ -3,6 +3,7 @@
 
 use crate::judgement::balance::Balance;
 use crate::math;
+use crate::order::put_in_order;
 use crate::outcome::Notice;
 use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::plan::{IngredientRow, Inverse, Level, StateShare};
@@ -108,7 +109,7 @@ impl Chain {
             let k = partition_at(study.partition_of(&ing.name), t);
             let s = speciate(&constants[i], ph);
             let mut pka: Vec<(f64, &'static str)> = constants[i].iter().map(|c| (c.pka, kind_words(c.kind))).collect();
-            pka.sort_by(|a, b| a.0.total_cmp(&b.0));
+            put_in_order(&mut pka, |a, b| a.0.total_cmp(&b.0));
             let end_mg = stages.raffinate_mg[i] * kept_raffinate;
             let strength = if start_mg[i] > 0.0 { (end_mg / final_ml) / (start_mg[i] / v0) } else { 0.0 };
             rows.push(IngredientRow {

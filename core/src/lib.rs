@@ -24,6 +24,7 @@ mod chain;
 pub mod judgement;
 pub mod library;
 pub mod math;
+pub mod order;
 pub mod outcome;
 pub mod partition;
 pub mod plan;

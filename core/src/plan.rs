@@ -6,6 +6,7 @@ use crate::judgement::explain;
 use crate::judgement::readings::{self, ReadingsReport};
 use crate::judgement::uncertainty::{Propagated, interval, propagate};
 use crate::math;
+use crate::order::put_in_order;
 use crate::outcome::{Notice, Outcome};
 use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::process::acidity::Acidity;
@@ -395,7 +396,7 @@ fn contributions(study: &Study, spread: &Propagated) -> Vec<Contribution> {
         })
         .filter(|c| c.share_of_variance > 1e-6)
         .collect();
-    list.sort_by(|a, b| b.share_of_variance.total_cmp(&a.share_of_variance));
+    put_in_order(&mut list, |a, b| b.share_of_variance.total_cmp(&a.share_of_variance));
     list
 }
 
@@ -434,7 +435,7 @@ pub fn curves(study: &Study, low: f64, high: f64, points: usize) -> Result<Curve
             constants.push(way.constant);
             curves.push(LogDCurve { label: way.label(), in_use: way.in_use, log_d: log_d(&constants) });
         }
-        curves.sort_by_key(|c| !c.in_use);
+        put_in_order(&mut curves, |a, b| b.in_use.cmp(&a.in_use));
     }
     Ok(Curves { ph, states, log_d: curves })
 }

@@ -1,5 +1,7 @@
 //! Words on a chart: how wide they are, where they break, and how they keep clear of each other.
 
+use unstir_core::order::put_in_order;
+
 /// Width of `text` in a sans face at font size `size`, about; rather too wide than too narrow.
 pub(super) fn text_width(text: &str, size: f64) -> f64 {
     let ems: f64 = text
@@ -60,7 +62,7 @@ pub(super) fn spread_apart(wanted: &[f64], sizes: &[f64], low: f64, high: f64) -
     let squeeze = if total > high - low && total > 0.0 { (high - low).max(0.0) / total } else { 1.0 };
     let size = |i: usize| sizes[i] * squeeze;
     let mut order: Vec<usize> = (0..wanted.len()).collect();
-    order.sort_by(|&a, &b| wanted[a].total_cmp(&wanted[b]));
+    put_in_order(&mut order, |&a, &b| wanted[a].total_cmp(&wanted[b]));
     // Runs of things that touch each other; each run sits where its members on average want to be.
     let mut runs: Vec<Run> = Vec::new();
     for &i in &order {

@@ -8,6 +8,7 @@ use leptos::prelude::*;
 use plotters::coord::Shift;
 use plotters::drawing::DrawingArea;
 use plotters::prelude::DrawingBackend;
+use unstir_core::order::put_in_order;
 
 /// Shares of the forms over pH.
 #[derive(Clone, Debug, PartialEq)]
@@ -111,7 +112,7 @@ fn peak(ph: &[f64], shares: &[f64]) -> Option<(f64, f64)> {
 fn order_by_peak(peaks: &[Option<(f64, f64)>]) -> Vec<usize> {
     let mut order: Vec<usize> = (0..peaks.len()).collect();
     let key = |i: usize| peaks[i].map_or(f64::INFINITY, |p| p.0);
-    order.sort_by(|&a, &b| key(a).total_cmp(&key(b)));
+    put_in_order(&mut order, |&a, &b| key(a).total_cmp(&key(b)));
     order
 }
 

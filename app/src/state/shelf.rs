@@ -2,6 +2,7 @@
 
 use super::draft::{DRAFT_VERSION, Draft};
 use crate::browser::storage::{NotKept, Store};
+use unstir_core::order::put_in_order;
 
 const STUDY: &str = "unstir.study.";
 const CURRENT: &str = "unstir.current";
@@ -24,7 +25,7 @@ pub fn key_of(id: u32) -> String {
 /// Numbers of the studies there are, rising.
 fn ids(store: &Store) -> Vec<u32> {
     let mut ids: Vec<u32> = store.keys().iter().filter_map(|k| k.strip_prefix(STUDY)?.parse().ok()).collect();
-    ids.sort_unstable();
+    put_in_order(&mut ids, Ord::cmp);
     ids
 }
 

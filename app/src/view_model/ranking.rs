@@ -5,6 +5,7 @@ use super::solvent::{Fact, SolventRow, solvent_row};
 use unstir_core::judgement::rank::{KOrigin, Parted, SolventRank};
 use unstir_core::library::limits::exposure_limits_for;
 use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent, solvents};
+use unstir_core::order::put_in_order;
 
 /// What the solvents are put in order by.
 #[derive(Clone, Copy, Debug, Default, PartialEq, Eq)]
@@ -76,7 +77,7 @@ pub fn arrange(ranks: &[SolventRank], density: Option<f64>, target: &str, wish: 
         }
     }
     // What is not known comes last in every order.
-    list.sort_by(|a, b| a.0.total_cmp(&b.0).then_with(|| a.1.name.cmp(&b.1.name)));
+    put_in_order(&mut list, |a, b| a.0.total_cmp(&b.0).then_with(|| a.1.name.cmp(&b.1.name)));
     list.into_iter().map(|(_, row)| row).collect()
 }
 

@@ -4,6 +4,7 @@ use crate::chain::Chain;
 use crate::library::partition::{KBasis, PublishedK, published_k};
 use crate::library::solutes::solute_named;
 use crate::library::solvents::{Layer, Solvent, solvents};
+use crate::order::put_in_order;
 use crate::partition::distribution::{Partition, distribution_ratio, partition_at};
 use crate::partition::estimate::estimated_k;
 use crate::process::concentrate::density_g_per_ml;
@@ -110,7 +111,7 @@ pub fn rank(study: &Study) -> Result<Vec<SolventRank>, Problem> {
     let liquor = density_g_per_ml(chain.liquor.brix.unwrap_or(0.0));
     let mut list: Vec<SolventRank> = solvents().iter().map(|s| one(study, &chain, s, liquor)).collect();
     let removal = |r: &SolventRank| r.target.as_ref().map_or(-1.0, |t| t.removed_fraction);
-    list.sort_by(|a, b| removal(b).total_cmp(&removal(a)).then_with(|| a.name.cmp(&b.name)));
+    put_in_order(&mut list, |a, b| removal(b).total_cmp(&removal(a)).then_with(|| a.name.cmp(&b.name)));
     Ok(list)
 }
 

@@ -2,6 +2,7 @@
 
 use super::sources::Source;
 use super::table::{Loaded, Row, load};
+use crate::order::put_in_order;
 use std::sync::OnceLock;
 
 /// What a site does.
@@ -168,7 +169,7 @@ fn readings() -> &'static Loaded<PkaReading> {
 
 fn parse_solute(row: &Row) -> Result<Solute, String> {
     let mut sites: Vec<Site> = row.list("pka")?.iter().map(|text| parse_site(text)).collect::<Result<_, _>>()?;
-    sites.sort_by(|a, b| a.pka.total_cmp(&b.pka));
+    put_in_order(&mut sites, |a, b| a.pka.total_cmp(&b.pka));
     Ok(Solute {
         id: row.required("id")?,
         name: row.required("name")?,

@@ -2,6 +2,7 @@
 
 use super::water;
 use crate::math;
+use crate::order::put_in_order;
 use crate::study::{Ingredient, MeantAs, Site, SiteKind};
 
 /// Gas constant [J/(mol K)]; CODATA 2018, exact.
@@ -94,7 +95,7 @@ pub fn speciate(constants: &[Constant], ph: f64) -> Speciation {
 /// [`super::activity::log_gamma_per_z2`].
 pub fn speciate_with_activities(constants: &[Constant], ph: f64, log_gamma_per_z2: f64) -> Speciation {
     let mut sorted = constants.to_vec();
-    sorted.sort_by(|a, b| b.pka.total_cmp(&a.pka));
+    put_in_order(&mut sorted, |a, b| b.pka.total_cmp(&a.pka));
     let n_acid = sorted.iter().filter(|c| c.kind == SiteKind::Acid).count();
 
     let mut log_weights = Vec::with_capacity(sorted.len() + 1);

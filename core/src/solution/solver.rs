@@ -7,6 +7,7 @@ use super::composition::{Activities, Carbonate, Composition, PH_RANGE};
 use super::ionisation::Constant;
 use super::water;
 use crate::math;
+use crate::order::put_in_order;
 use crate::study::SiteKind;
 
 /// A weak ingredient with its constants falling.
@@ -19,7 +20,7 @@ struct Ladder {
 impl Ladder {
     fn new(constants: &[Constant], mol_per_l: f64) -> Self {
         let mut pka: Vec<f64> = constants.iter().map(|c| c.pka).collect();
-        pka.sort_by(|a, b| b.total_cmp(a));
+        put_in_order(&mut pka, |a, b| b.total_cmp(a));
         let n_acid = constants.iter().filter(|c| c.kind == SiteKind::Acid).count();
         Self { pka, n_acid, mol_per_l }
     }
