@@ -5,9 +5,10 @@
 //!
 //! | to find | look in | file |
 //! | --- | --- | --- |
-//! | solvents: density, solubility, fire, peroxides, hazard codes | [`solvents`] | `solvents.csv` |
+//! | solvents: density, solubility, vapour, fire, peroxides, hazard codes | [`solvents`] | `solvents.csv` |
 //! | exposure limits of the solvents | [`limits`] | `exposure_limits.csv` |
 //! | cautions for the bench; what a hazard code means | [`cautions`] | `cautions.csv`, `hazard_statements.csv` |
+//! | limits of residues, as listed | [`residual`] | `residual_limits.csv` |
 //! | published partition coefficients | [`partition`] | `partition.csv` |
 //! | solutes, their sites, and printed readings of their constants | [`solutes`] | `solutes.csv`, `pka_readings.csv` |
 //! | what a source is and how far it was checked | [`sources`] | `sources.csv` |
@@ -19,6 +20,7 @@
 pub mod cautions;
 pub mod limits;
 pub mod partition;
+pub mod residual;
 pub mod solutes;
 pub mod solvents;
 pub mod sources;

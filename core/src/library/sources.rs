@@ -107,9 +107,10 @@ mod tests {
     use super::*;
 
     /// Every table that names sources.
-    const TABLES: [&str; 7] = [
+    const TABLES: [&str; 8] = [
         include_str!("../../data/solvents.csv"),
         include_str!("../../data/exposure_limits.csv"),
+        include_str!("../../data/residual_limits.csv"),
         include_str!("../../data/hazard_statements.csv"),
         include_str!("../../data/cautions.csv"),
         include_str!("../../data/partition.csv"),
