@@ -83,7 +83,9 @@ fn vapour_pressure_agrees_with_the_boiling_point() {
         let kelvin = boils + 273.15;
         let exponent = trouton / GAS_CONSTANT_J_MOL_K * (1.0 - kelvin / 298.15);
         let expected = 101.325 * crate::math::exp(exponent);
-        assert!((1.0 / FACTOR..FACTOR).contains(&(found / expected)), "{}: {found} against {expected}", s.id);
+        // Far below its boiling point the heat is larger than at it: only the order of magnitude.
+        let factor = if boils > 150.0 { 10.0 } else { FACTOR };
+        assert!((1.0 / factor..factor).contains(&(found / expected)), "{}: {found} against {expected}", s.id);
     }
 }
 
