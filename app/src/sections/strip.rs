@@ -69,7 +69,7 @@ pub fn StripStep() -> impl IntoView {
                 <Working
                     title="stripping"
                     lines=of_plan(strip_working)
-                    reference="Henry constant from vapour pressure and solubility; Lord Rayleigh, Phil. Mag. 4 (1902) 521; vapour pressure of water W. Wagner & A. Pruß (1993); regression J. N. Miller & J. C. Miller"
+                    reference="Henry constants R. Sander, Atmos. Chem. Phys. 15 (2015) 4399; Lord Rayleigh, Phil. Mag. 4 (1902) 521; vapour pressure of water W. Wagner & A. Pruß (1993); regression J. N. Miller & J. C. Miller"
                     validity="dilute solvent, well-mixed liquid, first order at constant conditions; a listed limit in mg/kg is taken as mg/L times the density of the feed"
                 />
             </Results>

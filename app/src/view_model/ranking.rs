@@ -113,10 +113,10 @@ fn key(s: &Solvent, rank: Option<&SolventRank>, density: Option<f64>, order: Ord
             known.and_then(|k| k.reduce(f64::max)).unwrap_or(unknown)
         }
         OrderBy::Parting => -(s.density_20c_g_ml - density.unwrap_or(1.0)).abs(),
-        OrderBy::Boiling => s.boiling_point_c,
+        OrderBy::Boiling => s.boiling_point_c.unwrap_or(unknown),
         OrderBy::Flash => -s.flash_point_c.unwrap_or(1e3),
         OrderBy::Limit => exposure_limits_for(&s.id).and_then(|l| l.strictest_twa_ppm).map_or(unknown, |v| -v),
-        OrderBy::Solubility => s.solubility_in_water_mass_pct,
+        OrderBy::Solubility => s.solubility_in_water_mass_pct.unwrap_or(unknown),
         OrderBy::Name => 0.0,
     }
 }

@@ -49,6 +49,10 @@ pub(super) fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRo
         let meaning = hazard_statement(code).map_or_else(|| "see the safety data sheet".to_owned(), |h| h.meaning);
         (code.clone(), meaning)
     };
+    let mut codes: Vec<(String, String)> = s.h_codes.iter().chain(&s.euh_codes).map(statement).collect();
+    if codes.is_empty() {
+        codes.push(("No code held".to_owned(), "read the supplier's safety data sheet".to_owned()));
+    }
     SolventRow {
         id: s.id.clone(),
         name: s.name.clone(),
@@ -59,7 +63,7 @@ pub(super) fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRo
         },
         facts: facts(s, liquor_density),
         limits: exposure_limits_for(&s.id).map(|l| limit_facts(&l)).unwrap_or_default(),
-        codes: s.h_codes.iter().chain(&s.euh_codes).map(statement).collect(),
+        codes,
         cautions: at_step(&cautions_for(&s.id), CautionStep::Solvent),
         note: s.note.clone(),
     }
@@ -77,7 +81,8 @@ fn facts(s: &Solvent, liquor_density: Option<f64>) -> Vec<Fact> {
         format!("{} ({} g/mL)", layer_words(s.layer_against_water()), fixed(s.density_20c_g_ml, 3)),
         &s.density_source,
     ));
-    list.push(fact("boils at", format!("{} °C", s.boiling_point_c), &s.boiling_point_source));
+    let boils = s.boiling_point_c.map_or_else(|| "does not boil undecomposed".to_owned(), |t| format!("{t} °C"));
+    list.push(fact("boils at", boils, &s.boiling_point_source));
     let flash =
         s.flash_point_c.map_or_else(|| "none by the usual tests".to_owned(), |t| format!("{} °C", with_minus(t)));
     list.push(fact("flash point", flash, &s.flash_point_source));
@@ -89,7 +94,8 @@ fn facts(s: &Solvent, liquor_density: Option<f64>) -> Vec<Fact> {
     list.push(fact("explosive", explosive, &s.flammability_source));
     list.push(fact(
         "dissolves in water",
-        format!("{} g per 100 g", significant(s.solubility_in_water_mass_pct, 3)),
+        s.solubility_in_water_mass_pct
+            .map_or_else(|| "not known".to_owned(), |p| format!("{} g per 100 g", significant(p, 3))),
         &s.solubility_in_water_source,
     ));
     let peroxides = match s.peroxide_class {
@@ -252,7 +258,7 @@ mod tests {
     #[test]
     fn every_row_has_cautions_codes_and_facts() {
         let rows: Vec<SolventRow> = solvents().iter().map(|s| solvent_row(s, Some(1.2))).collect();
-        assert_eq!(rows.len(), 12);
+        assert_eq!(rows.len(), 22);
         for r in &rows {
             assert!(!r.cautions.is_empty() && !r.codes.is_empty(), "{}", r.name);
             for what in ["against this liquor", "against water", "boils at", "flash point", "explosive", "peroxides"] {

@@ -2,7 +2,7 @@
 
 use super::format::{fixed, measured, percent, significant};
 use crate::state::work::Good;
-use unstir_core::library::residual::residual_limits;
+use unstir_core::library::residual::limits_for;
 use unstir_core::plan::Plan;
 use unstir_core::process::strip::StripPlan;
 use unstir_core::study::Study;
@@ -10,9 +10,12 @@ use unstir_core::study::Study;
 /// Stripping in one line; empty for a solvent the library does not hold.
 pub fn strip_line(plan: &Plan) -> String {
     let Some(s) = &plan.strip else { return String::new() };
-    match &s.fit {
-        Some(f) => format!("a tenth every {} min by {} readings", significant(f.minutes_per_decade, 2), f.readings),
-        None => format!("up to {} mg/L to begin with", significant(s.start_mg_per_l, 2)),
+    match (&s.fit, s.start_mg_per_l) {
+        (Some(f), _) => {
+            format!("a tenth every {} min by {} readings", significant(f.minutes_per_decade, 2), f.readings)
+        }
+        (None, Some(c)) => format!("up to {} mg/L to begin with", significant(c, 2)),
+        (None, None) => "how much is dissolved to begin with is not known".to_owned(),
     }
 }
 
@@ -21,10 +24,13 @@ pub fn strip_sentences(g: &Good) -> Vec<String> {
     let Some(s) = &g.plan.strip else { return Vec::new() };
     let name = &g.study.solvent.name;
     let mut list = Vec::new();
-    list.push(format!(
-        "Saturated, the raffinate holds about {} mg/L of {name} dissolved (25 °C; sugar lowers it further), besides what was left behind on draining.",
-        significant(s.start_mg_per_l, 2)
-    ));
+    list.push(match s.start_mg_per_l {
+        Some(c) => format!(
+            "Saturated, the raffinate holds about {} mg/L of {name} dissolved (25 °C; sugar lowers it further), besides what was left behind on draining.",
+            significant(c, 2)
+        ),
+        None => format!("How much {name} water takes up is not held: measure it."),
+    });
     list.push(match s.boils_at_c {
         Some(t) => format!(
             "At {} kPa water boils at {} °C; dissolved solids raise that a little.",
@@ -33,13 +39,13 @@ pub fn strip_sentences(g: &Good) -> Vec<String> {
         ),
         None => format!("At {} kPa water does not boil as a liquid.", significant(s.pressure_kpa, 3)),
     });
-    list.push(format!(
-        "{} {} is about {} times as volatile as water from dilute solution: at equilibrium {} of the water, and the aroma as volatile as it, goes for each tenfold fall. That is a floor; practice takes more.",
-        capital_first(name),
-        "in water",
-        significant(s.relative_volatility, 2),
-        percent(s.water_per_decade)
-    ));
+    if let (Some(alpha), Some(water)) = (s.relative_volatility, s.water_per_decade) {
+        list.push(format!(
+            "From dilute solution {name} is about {} times as volatile as water: at equilibrium {} of the water, and the aroma as volatile as it, goes for each tenfold fall. That is a floor; practice takes more.",
+            significant(alpha, 2),
+            percent(water)
+        ));
+    }
     if let Some(f) = &s.fit {
         list.push(format!(
             "By the readings it falls to a tenth every {} min (rate {} per min), from {} mg/L.",
@@ -51,24 +57,18 @@ pub fn strip_sentences(g: &Good) -> Vec<String> {
         list.push("A rate needs three readings or more that fall.".to_owned());
     }
     if let Some(serving) = &s.serving {
-        let beside = match serving.daily_exposure_mg {
-            Some(d) => format!(
+        let beside = serving.daily_exposure_mg.map_or_else(String::new, |d| {
+            format!(
                 "; the permitted daily exposure in ICH Q3C, which is for medicines, is {} mg. This compares two numbers and says nothing about drinking it",
                 significant(d, 2)
-            ),
-            None => String::new(),
-        };
+            )
+        });
         list.push(format!(
             "By the last reading a serving of the made-up liquid holds {} mg{beside}.",
             significant(serving.mg, 2)
         ));
     }
     list
-}
-
-fn capital_first(text: &str) -> String {
-    let mut c = text.chars();
-    c.next().map(|first| first.to_uppercase().chain(c).collect()).unwrap_or_default()
 }
 
 /// Head of the table of residues to reach.
@@ -92,38 +92,31 @@ pub fn limits_rows(plan: &Plan) -> Vec<Vec<String>> {
                     || "–".to_owned(),
                     |m| format!("{} ({}–{})", fixed(m.value, 0), fixed(m.low, 0), fixed(m.high, 0)),
                 ),
-                percent(l.water_fraction),
+                l.water_fraction.map_or_else(|| "not known".to_owned(), percent),
             ]
         })
         .collect()
 }
 
-/// What the lists say for the purpose of the study, word for word with their source.
+/// What the lists say for the purpose of the study, each with its source.
 pub fn list_lines(study: &Study) -> Vec<String> {
-    residual_limits(&study.solvent.id, study.goal.purpose)
-        .iter()
-        .map(|l| {
-            format!(
-                "As listed in {}: {}. {}; check the current law.",
-                l.list.name(),
-                l.words(),
-                super::solvent::cite(&l.source)
-            )
-        })
-        .collect()
+    let said = limits_for(&study.solvent.id, study.goal.purpose);
+    let listed = said.listed.iter().map(|l| format!("{} {}", l.sentence(), super::solvent::cite(&l.source)));
+    listed.chain(said.not_listed.iter().cloned()).collect()
 }
 
 /// How it was computed, with the values put in.
 pub fn strip_working(g: &Good) -> Vec<String> {
     let Some(s) = &g.plan.strip else { return Vec::new() };
-    let mut lines = vec![
-        format!("volatility against water α = (p°/x_s)/p_w, 25 °C = {}", significant(s.relative_volatility, 3)),
-        format!(
+    let mut lines = Vec::new();
+    if let (Some(alpha), Some(water)) = (s.relative_volatility, s.water_per_decade) {
+        lines.push(format!("volatility against water α = K_H/p_w, 25 °C = {}", significant(alpha, 3)));
+        lines.push(format!(
             "Rayleigh: n/n₀ = (W/W₀)^α; a tenth left takes 1 − 0.1^(1/α) = {} of the water",
-            percent(s.water_per_decade)
-        ),
-        format!("limit in the raffinate = limit·V_made up/V_raffinate = limit/{}", significant(s.dilution, 3)),
-    ];
+            percent(water)
+        ));
+    }
+    lines.push(format!("limit in the raffinate = limit·V_made up/V_raffinate = limit/{}", significant(s.dilution, 3)));
     lines.extend(fit_line(s));
     lines
 }
@@ -152,6 +145,6 @@ mod tests {
         let rows = limits_rows(&g.plan);
         assert!(rows.iter().all(|r| r.len() == limits_head().len()) && !rows.is_empty());
         let lists = list_lines(&g.study).join(" ");
-        assert!(lists.contains("check the current law") && lists.contains("2 mg/kg in roasted coffee"), "{lists}");
+        assert!(lists.contains("check the current law") && lists.contains("2 mg/kg for roasted coffee"), "{lists}");
     }
 }

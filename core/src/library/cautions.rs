@@ -88,7 +88,12 @@ const ANY: &str = "any";
 /// Cautions of this solvent alone, in the order of the file. Those that hold for every
 /// solvent come from [`general_cautions`]; show both.
 pub fn cautions_for(solvent_id: &str) -> Vec<Caution> {
-    cautions().items.iter().filter(|(subject, _)| subject == solvent_id).map(|(_, caution)| caution.clone()).collect()
+    cautions()
+        .items
+        .iter()
+        .filter(|(subjects, _)| subjects.iter().any(|s| s == solvent_id))
+        .map(|(_, caution)| caution.clone())
+        .collect()
 }
 
 /// Cautions that hold whatever the solvent.
@@ -101,8 +106,8 @@ pub fn hazard_statement(code: &str) -> Option<HazardStatement> {
     statements().items.iter().find(|statement| statement.code == code).cloned()
 }
 
-fn cautions() -> &'static Loaded<(String, Caution)> {
-    static TABLE: OnceLock<Loaded<(String, Caution)>> = OnceLock::new();
+fn cautions() -> &'static Loaded<(Vec<String>, Caution)> {
+    static TABLE: OnceLock<Loaded<(Vec<String>, Caution)>> = OnceLock::new();
     TABLE.get_or_init(|| load(include_str!("../../data/cautions.csv"), parse_caution))
 }
 
@@ -111,7 +116,7 @@ fn statements() -> &'static Loaded<HazardStatement> {
     TABLE.get_or_init(|| load(include_str!("../../data/hazard_statements.csv"), parse_statement))
 }
 
-fn parse_caution(row: &Row) -> Result<(String, Caution), String> {
+fn parse_caution(row: &Row) -> Result<(Vec<String>, Caution), String> {
     let caution = Caution {
         sign_word: SignWord::parse(row.text("sign_word")?)?,
         step: match row.text("step")? {
@@ -130,7 +135,8 @@ fn parse_caution(row: &Row) -> Result<(String, Caution), String> {
         what_to_do: row.required("what_to_do")?,
         source: row.source("source")?,
     };
-    Ok((row.required("subject")?, caution))
+    row.required("subject")?;
+    Ok((row.list("subject")?, caution))
 }
 
 fn parse_statement(row: &Row) -> Result<HazardStatement, String> {
@@ -159,7 +165,7 @@ mod tests {
     #[test]
     fn every_subject_is_a_solvent_or_any() {
         let ids: Vec<String> = solvents().into_iter().map(|s| s.id).collect();
-        for (subject, _) in &cautions().items {
+        for subject in cautions().items.iter().flat_map(|(subjects, _)| subjects) {
             assert!(subject == ANY || ids.contains(subject), "{subject}");
         }
         assert!(cautions_for("water").is_empty());
@@ -195,12 +201,12 @@ mod tests {
     /// Sentences are read at the bench, at arm's length: keep them short, and promise nothing.
     #[test]
     fn cautions_are_short_and_promise_nothing() {
-        for (subject, caution) in &cautions().items {
+        for (subjects, caution) in &cautions().items {
             for text in [&caution.what_can_happen, &caution.what_to_do] {
-                assert!(text.len() <= 200 && text.ends_with('.'), "{subject}: {text}");
+                assert!(text.len() <= 200 && text.ends_with('.'), "{subjects:?}: {text}");
                 let lower = text.to_lowercase();
                 for word in ["is safe", "is legal", "harmless", "permitted"] {
-                    assert!(!lower.contains(word), "{subject}: {text}");
+                    assert!(!lower.contains(word), "{subjects:?}: {text}");
                 }
             }
         }

@@ -5,7 +5,7 @@
 //!
 //! | to find | look in | file |
 //! | --- | --- | --- |
-//! | solvents: density, solubility, fire, peroxides, hazard codes | [`solvents`] | `solvents.csv` |
+//! | solvents: density, solubility, vapour, fire, peroxides, hazard codes | [`solvents`] | `solvents.csv` |
 //! | exposure limits of the solvents | [`limits`] | `exposure_limits.csv` |
 //! | cautions for the bench; what a hazard code means | [`cautions`] | `cautions.csv`, `hazard_statements.csv` |
 //! | limits of what stays of a solvent, as listed | [`residual`] | `residual_limits.csv` |

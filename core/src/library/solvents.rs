@@ -11,8 +11,11 @@ pub const WATER_DENSITY_20C_G_ML: f64 = 0.9982;
 /// solids, mutual saturation and temperature each move it by a few hundredths.
 pub const LAYER_MARGIN_G_ML: f64 = 0.05;
 
+/// Highest flash point of a flammable liquid [°C]: UN GHS, category 4 (CLP stops at 60).
+pub const FLAMMABLE_TO_C: f64 = 93.0;
+
 /// Pressure of 1 mmHg [kPa] (101.325 kPa / 760).
-const KPA_PER_MMHG: f64 = 101.325 / 760.0;
+pub const KPA_PER_MMHG: f64 = 101.325 / 760.0;
 
 /// Where the solvent lies once the phases have settled.
 #[derive(Clone, Copy, Debug, PartialEq, Eq)]
@@ -36,6 +39,45 @@ pub enum PeroxideClass {
     OnConcentration,
 }
 
+/// Where Antoine constants come from.
+#[derive(Clone, Copy, Debug, PartialEq, Eq)]
+pub enum AntoineKind {
+    /// Constants of a published table, units converted.
+    Published,
+    /// Our least-squares fit to a published vapour-pressure equation.
+    Fitted,
+    /// Our fit to an estimate: no measured constants were found.
+    Estimate,
+}
+
+/// Antoine constants: `log10(p/mmHg) = A − B/(t/°C + C)`.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Antoine {
+    /// `A` [-].
+    pub a: f64,
+    /// `B` [°C].
+    pub b: f64,
+    /// `C` [°C].
+    pub c: f64,
+    /// Lowest temperature they hold for [°C].
+    pub low_c: f64,
+    /// Highest temperature they hold for [°C].
+    pub high_c: f64,
+    /// Where they come from.
+    pub kind: AntoineKind,
+}
+
+/// Henry solubility constant in pure water: dissolved concentration over partial pressure.
+#[derive(Clone, Copy, Debug, PartialEq)]
+pub struct Henry {
+    /// Constant at 25 °C [mol/(m³ Pa)].
+    pub hcp_25c_mol_m3_pa: f64,
+    /// Lowest and highest printed constant [mol/(m³ Pa)].
+    pub range_mol_m3_pa: Option<(f64, f64)>,
+    /// Slope `d ln Hcp/d(1/T)` [K]; `None` when not held.
+    pub slope_k: Option<f64>,
+}
+
 /// One solvent. Mass percent is grams per 100 g of the saturated phase.
 #[derive(Clone, Debug, PartialEq)]
 pub struct Solvent {
@@ -55,22 +97,22 @@ pub struct Solvent {
     pub density_20c_g_ml: f64,
     /// Source of the density.
     pub density_source: Source,
-    /// Boiling point at 101.325 kPa [°C].
-    pub boiling_point_c: f64,
+    /// Boiling point at 101.325 kPa [°C]; `None` for an oil that does not boil undecomposed.
+    pub boiling_point_c: Option<f64>,
     /// Source of the boiling point.
     pub boiling_point_source: Source,
-    /// Solubility in water [mass percent].
-    pub solubility_in_water_mass_pct: f64,
+    /// Solubility in water [mass percent]; `None` when no number is held.
+    pub solubility_in_water_mass_pct: Option<f64>,
     /// Temperature of that solubility [°C]; sets that state none are taken as about 25.
-    pub solubility_in_water_temperature_c: f64,
+    pub solubility_in_water_temperature_c: Option<f64>,
     /// Lowest and highest printed solubility in water [mass percent].
-    pub solubility_in_water_range_mass_pct: (f64, f64),
+    pub solubility_in_water_range_mass_pct: Option<(f64, f64)>,
     /// Source of the solubility in water.
     pub solubility_in_water_source: Source,
-    /// Water in the saturated solvent [mass percent].
-    pub water_in_solvent_mass_pct: f64,
+    /// Water in the saturated solvent [mass percent]; `None` when no number is held.
+    pub water_in_solvent_mass_pct: Option<f64>,
     /// Temperature of that value [°C].
-    pub water_in_solvent_temperature_c: f64,
+    pub water_in_solvent_temperature_c: Option<f64>,
     /// Source of the water content.
     pub water_in_solvent_source: Source,
     /// Flash point, closed cup [°C]; `None` when it has none by the usual tests.
@@ -103,12 +145,26 @@ pub struct Solvent {
     pub interfacial_tension_20c_mn_m: Option<f64>,
     /// Source of the interfacial tension.
     pub interfacial_tension_source: Source,
-    /// Vapour pressure at 20 °C [kPa].
-    pub vapour_pressure_20c_kpa: f64,
-    /// Vapour pressure at 25 °C [kPa].
-    pub vapour_pressure_25c_kpa: f64,
-    /// Source of both vapour pressures.
+    /// Vapour pressure at 20 °C [kPa]; `None` when negligible.
+    pub vapour_pressure_20c_kpa: Option<f64>,
+    /// Vapour pressure at 25 °C [kPa]; `None` when negligible.
+    pub vapour_pressure_25c_kpa: Option<f64>,
+    /// Constants of the vapour pressure; `None` when none are held.
+    pub antoine: Option<Antoine>,
+    /// Source of the vapour pressures and of the constants.
     pub vapour_pressure_source: Source,
+    /// How it divides between water and air; `None` when no constant is held.
+    pub henry: Option<Henry>,
+    /// Source of that.
+    pub henry_source: Source,
+    /// Heat of vaporisation at 25 °C [kJ/mol].
+    pub heat_of_vaporisation_25c_kj_per_mol: Option<f64>,
+    /// Heat of vaporisation at the boiling point [kJ/mol].
+    pub heat_of_vaporisation_boiling_kj_per_mol: Option<f64>,
+    /// Source of both.
+    pub heat_of_vaporisation_source: Source,
+    /// Whether it holds halogen, and so goes to the halogenated waste stream.
+    pub halogenated: bool,
     /// Value groups that are weak, by name: a subset of [`GROUPS`].
     pub weak: Vec<String>,
     /// A remark; often blank.
@@ -116,7 +172,7 @@ pub struct Solvent {
 }
 
 /// Names of the value groups, as used in [`Solvent::weak`].
-pub const GROUPS: [&str; 12] = [
+pub const GROUPS: [&str; 14] = [
     "identity",
     "density",
     "boiling_point",
@@ -129,6 +185,8 @@ pub const GROUPS: [&str; 12] = [
     "viscosity",
     "interfacial_tension",
     "vapour_pressure",
+    "henry",
+    "enthalpy",
 ];
 
 impl Solvent {
@@ -158,9 +216,10 @@ impl Solvent {
         }
     }
 
-    /// Whether it burns: it has a flash point.
+    /// Whether its vapour can be lit in ordinary handling: a flash point of at most
+    /// [`FLAMMABLE_TO_C`]. Oils burn too, once they are hot.
     pub fn is_flammable(&self) -> bool {
-        self.flash_point_c.is_some()
+        self.flash_point_c.is_some_and(|t| t <= FLAMMABLE_TO_C)
     }
 
     /// Whether the value group `group` (one of [`GROUPS`]) is weak.
@@ -169,7 +228,7 @@ impl Solvent {
     }
 
     /// Every value group with its source, in the order of [`GROUPS`].
-    pub fn sources(&self) -> [(&'static str, &Source); 12] {
+    pub fn sources(&self) -> [(&'static str, &Source); 14] {
         [
             ("identity", &self.identity_source),
             ("density", &self.density_source),
@@ -183,6 +242,8 @@ impl Solvent {
             ("viscosity", &self.viscosity_source),
             ("interfacial_tension", &self.interfacial_tension_source),
             ("vapour_pressure", &self.vapour_pressure_source),
+            ("henry", &self.henry_source),
+            ("enthalpy", &self.heat_of_vaporisation_source),
         ]
     }
 }
@@ -202,7 +263,27 @@ fn table() -> &'static Loaded<Solvent> {
     TABLE.get_or_init(|| load(include_str!("../../data/solvents.csv"), parse))
 }
 
+fn parse_antoine(row: &Row) -> Result<Option<Antoine>, String> {
+    let kind = match row.text("antoine_kind")? {
+        "" => return Ok(None),
+        "published" => AntoineKind::Published,
+        "fitted" => AntoineKind::Fitted,
+        "estimate" => AntoineKind::Estimate,
+        other => return Err(format!("antoine_kind is none of the known words: {other}")),
+    };
+    Ok(Some(Antoine {
+        a: row.number("antoine_A")?,
+        b: row.number("antoine_B")?,
+        c: row.number("antoine_C")?,
+        low_c: row.number("antoine_low_C")?,
+        high_c: row.number("antoine_high_C")?,
+        kind,
+    }))
+}
+
 fn parse(row: &Row) -> Result<Solvent, String> {
+    let hcp_range = row.optional_number("hcp_low")?.zip(row.optional_number("hcp_high")?);
+    let hcp_slope = row.optional_number("hcp_slope_K")?;
     Ok(Solvent {
         id: row.required("id")?,
         name: row.required("name")?,
@@ -212,17 +293,16 @@ fn parse(row: &Row) -> Result<Solvent, String> {
         identity_source: row.source("source_identity")?,
         density_20c_g_ml: row.number("density_20C_g_mL")?,
         density_source: row.source("source_density")?,
-        boiling_point_c: row.number("boiling_point_C")?,
+        boiling_point_c: row.optional_number("boiling_point_C")?,
         boiling_point_source: row.source("source_boiling_point")?,
-        solubility_in_water_mass_pct: row.number("solubility_in_water_pct")?,
-        solubility_in_water_temperature_c: row.number("solubility_in_water_T_C")?,
-        solubility_in_water_range_mass_pct: (
-            row.number("solubility_in_water_low_pct")?,
-            row.number("solubility_in_water_high_pct")?,
-        ),
+        solubility_in_water_mass_pct: row.optional_number("solubility_in_water_pct")?,
+        solubility_in_water_temperature_c: row.optional_number("solubility_in_water_T_C")?,
+        solubility_in_water_range_mass_pct: row
+            .optional_number("solubility_in_water_low_pct")?
+            .zip(row.optional_number("solubility_in_water_high_pct")?),
         solubility_in_water_source: row.source("source_solubility")?,
-        water_in_solvent_mass_pct: row.number("water_in_solvent_pct")?,
-        water_in_solvent_temperature_c: row.number("water_in_solvent_T_C")?,
+        water_in_solvent_mass_pct: row.optional_number("water_in_solvent_pct")?,
+        water_in_solvent_temperature_c: row.optional_number("water_in_solvent_T_C")?,
         water_in_solvent_source: row.source("source_water_in_solvent")?,
         flash_point_c: row.optional_number("flash_point_C")?,
         flash_point_source: row.source("source_flash_point")?,
@@ -244,157 +324,24 @@ fn parse(row: &Row) -> Result<Solvent, String> {
         viscosity_source: row.source("source_viscosity")?,
         interfacial_tension_20c_mn_m: row.optional_number("interfacial_tension_20C_mN_m")?,
         interfacial_tension_source: row.source("source_interfacial_tension")?,
-        vapour_pressure_20c_kpa: row.number("vapour_pressure_20C_mmHg")? * KPA_PER_MMHG,
-        vapour_pressure_25c_kpa: row.number("vapour_pressure_25C_mmHg")? * KPA_PER_MMHG,
+        vapour_pressure_20c_kpa: row.optional_number("vapour_pressure_20C_mmHg")?.map(|p| p * KPA_PER_MMHG),
+        vapour_pressure_25c_kpa: row.optional_number("vapour_pressure_25C_mmHg")?.map(|p| p * KPA_PER_MMHG),
+        antoine: parse_antoine(row)?,
         vapour_pressure_source: row.source("source_vapour_pressure")?,
+        henry: row.optional_number("hcp_25C_mol_m3_Pa")?.map(|hcp_25c_mol_m3_pa| Henry {
+            hcp_25c_mol_m3_pa,
+            range_mol_m3_pa: hcp_range,
+            slope_k: hcp_slope,
+        }),
+        henry_source: row.source("source_henry")?,
+        heat_of_vaporisation_25c_kj_per_mol: row.optional_number("hvap_25C_kJ_mol")?,
+        heat_of_vaporisation_boiling_kj_per_mol: row.optional_number("hvap_boiling_kJ_mol")?,
+        heat_of_vaporisation_source: row.source("source_enthalpy")?,
+        halogenated: row.yes("halogenated")?,
         weak: row.list("weak")?,
         note: row.owned("note")?,
     })
 }
 
 #[cfg(test)]
-mod tests {
-    use super::super::cautions::hazard_statement;
-    use super::super::sources::Checked;
-    use super::*;
-
-    #[test]
-    fn every_row_parses_and_ids_are_unique() {
-        assert_eq!(table().defects, Vec::<String>::new());
-        let all = solvents();
-        assert_eq!(all.len(), 12);
-        for (i, one) in all.iter().enumerate() {
-            assert!(all.iter().skip(i + 1).all(|other| other.id != one.id && other.cas != one.cas), "{}", one.id);
-        }
-        assert_eq!(solvent("water"), None);
-    }
-
-    #[test]
-    fn every_number_is_in_range() {
-        for s in solvents() {
-            let id = &s.id;
-            assert!((50.0..200.0).contains(&s.molar_mass_g_mol), "{id}");
-            assert!((0.6..1.6).contains(&s.density_20c_g_ml), "{id}");
-            assert!((30.0..130.0).contains(&s.boiling_point_c), "{id}");
-            let (low, high) = s.solubility_in_water_range_mass_pct;
-            assert!(low > 0.0 && high < 10.0, "{id}");
-            assert!((low..=high).contains(&s.solubility_in_water_mass_pct), "{id}");
-            assert!((0.0..5.0).contains(&s.water_in_solvent_mass_pct), "{id}");
-            for t in [s.solubility_in_water_temperature_c, s.water_in_solvent_temperature_c] {
-                assert!((20.0..=25.0).contains(&t), "{id}");
-            }
-            assert!(s.flash_point_c.is_none_or(|t| (-50.0..30.0).contains(&t)), "{id}");
-            assert_eq!(s.lel_vol_pct.is_some(), s.uel_vol_pct.is_some(), "{id}");
-            assert!(s.lel_vol_pct.zip(s.uel_vol_pct).is_none_or(|(l, u)| 0.0 < l && l < u && u < 50.0), "{id}");
-            assert!(!s.is_flammable() || s.lel_vol_pct.is_some(), "{id}");
-            assert!((0.1..2.0).contains(&s.viscosity_25c_mpa_s), "{id}");
-            assert!(s.interfacial_tension_20c_mn_m.is_none_or(|g| (1.0..60.0).contains(&g)), "{id}");
-            assert!(0.0 < s.vapour_pressure_20c_kpa && s.vapour_pressure_20c_kpa < s.vapour_pressure_25c_kpa, "{id}");
-        }
-    }
-
-    /// CAS registry numbers end in a check digit: the sum of digits times place, modulo 10.
-    #[test]
-    fn cas_numbers_have_a_right_check_digit() {
-        for s in solvents() {
-            let digits: Vec<u32> = s.cas.chars().filter_map(|c| c.to_digit(10)).rev().collect();
-            let sum: u32 = digits.iter().skip(1).zip(1..).map(|(digit, place)| digit * place).sum();
-            assert_eq!(digits.first(), Some(&(sum % 10)), "{}", s.id);
-        }
-    }
-
-    /// Vapour pressure and boiling point come from different tables. Clausius and Clapeyron with
-    /// Trouton's rule (88 J/mol/K) link them well within a factor of two, which is enough to
-    /// catch a slipped digit or a wrong unit (1 mmHg is 0.133 kPa).
-    #[test]
-    fn vapour_pressure_agrees_with_the_boiling_point() {
-        const GAS_CONSTANT_J_MOL_K: f64 = 8.314;
-        const TROUTON_J_MOL_K: f64 = 88.0;
-        const FACTOR: f64 = 2.0;
-        for s in solvents() {
-            let kelvin = s.boiling_point_c + 273.15;
-            let exponent = TROUTON_J_MOL_K / GAS_CONSTANT_J_MOL_K * (1.0 - kelvin / 298.15);
-            let expected = 101.325 * crate::math::exp(exponent);
-            let found = s.vapour_pressure_25c_kpa;
-            assert!((1.0 / FACTOR..FACTOR).contains(&(found / expected)), "{}: {found} against {expected}", s.id);
-        }
-    }
-
-    #[test]
-    fn every_hazard_code_has_a_meaning() {
-        for s in solvents() {
-            assert!(!s.h_codes.is_empty(), "{}", s.id);
-            for code in s.h_codes.iter().chain(&s.euh_codes) {
-                assert!(hazard_statement(code).is_some(), "{}: {code}", s.id);
-            }
-        }
-    }
-
-    #[test]
-    fn codes_and_flash_points_agree() {
-        for s in solvents() {
-            // CLP Annex I 2.6.2: category 1 below 23 °C and boiling at 35 °C or less (H224),
-            // category 2 below 23 °C (H225), category 3 up to 60 °C (H226).
-            // The flash point of n-butyl acetate straddles the boundary: 22 here, 22 to 27 in print.
-            let expected = match s.flash_point_c {
-                Some(_) if s.id == "n_butyl_acetate" => Some("H226"),
-                Some(t) if t < 23.0 && s.boiling_point_c <= 35.0 => Some("H224"),
-                Some(t) if t < 23.0 => Some("H225"),
-                Some(_) => Some("H226"),
-                None => None,
-            };
-            let found = s.h_codes.iter().map(String::as_str).find(|code| code.starts_with("H22"));
-            assert_eq!(found, expected, "{}", s.id);
-            assert_eq!(
-                s.euh_codes.iter().any(|code| code == "EUH019"),
-                s.peroxide_class == PeroxideClass::OnConcentration,
-                "{}",
-                s.id
-            );
-        }
-    }
-
-    #[test]
-    fn every_group_has_a_source_and_weak_names_a_group() {
-        for s in solvents() {
-            for ((name, source), group) in s.sources().into_iter().zip(GROUPS) {
-                assert_eq!(name, group);
-                assert!(!source.citation.is_empty(), "{}: {name}", s.id);
-                assert!(source.checked != Checked::NotHeld || s.is_weak(name), "{}: {name}", s.id);
-            }
-            assert!(s.weak.iter().all(|name| GROUPS.contains(&name.as_str())), "{}: {:?}", s.id, s.weak);
-            assert!(s.interfacial_tension_20c_mn_m.is_some() || s.is_weak("interfacial_tension"), "{}", s.id);
-        }
-    }
-
-    #[test]
-    fn layers_follow_density() {
-        let names = |layer| {
-            solvents().into_iter().filter(|s| s.layer_against_water() == layer).map(|s| s.id).collect::<Vec<_>>()
-        };
-        assert_eq!(names(Layer::Lower), ["dichloromethane", "chloroform"]);
-        assert_eq!(names(Layer::Uncertain), Vec::<String>::new());
-        let dichloromethane = solvent("dichloromethane").unwrap();
-        // Sucrose of 65 % has 1.3166 g/mL at 20 °C (ICUMSA polynomial): too close to tell.
-        assert_eq!(dichloromethane.layer_against(1.3166), Layer::Uncertain);
-        assert_eq!(dichloromethane.layer_against(1.38), Layer::Upper);
-        assert_eq!(dichloromethane.layer_against(f64::NAN), Layer::Uncertain);
-    }
-
-    #[test]
-    fn published_values_are_carried_as_printed() {
-        let ether = solvent("diethyl_ether").unwrap();
-        assert_eq!(ether.density_20c_g_ml, 0.7138); // CRC Handbook table
-        assert_eq!(ether.flash_point_c, Some(-45.0)); // IEC 60079-20-1 (2010)
-        assert_eq!((ether.lel_vol_pct, ether.uel_vol_pct), (Some(1.7), Some(39.2))); // same
-        let ester = solvent("ethyl_acetate").unwrap();
-        assert_eq!(ester.water_in_solvent_mass_pct, 3.3); // IUPAC-NIST SDS vol. 88, 20 °C
-        assert_eq!(ester.interfacial_tension_20c_mn_m, Some(6.8)); // Adamson & Gast 1997
-        let dichloromethane = solvent("dichloromethane").unwrap();
-        assert_eq!(dichloromethane.boiling_point_c, 39.8); // CRC Handbook
-        // 356.5 mmHg from the Antoine constants of Poling et al.; 47.5 kPa.
-        assert!((dichloromethane.vapour_pressure_20c_kpa - 47.53).abs() < 0.005);
-        assert_eq!(dichloromethane.h_codes, ["H351"]); // CLP Annex VI, memory
-        assert_eq!(dichloromethane.ghs_source.checked, Checked::Memory);
-    }
-}
+mod tests;

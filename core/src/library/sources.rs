@@ -110,6 +110,7 @@ mod tests {
     const TABLES: [&str; 11] = [
         include_str!("../../data/solvents.csv"),
         include_str!("../../data/exposure_limits.csv"),
+        include_str!("../../data/residual_limits.csv"),
         include_str!("../../data/hazard_statements.csv"),
         include_str!("../../data/cautions.csv"),
         include_str!("../../data/partition.csv"),
@@ -118,7 +119,6 @@ mod tests {
         include_str!("../../data/activity_constants.csv"),
         include_str!("../../data/free_energy_systems.csv"),
         include_str!("../../data/descriptors.csv"),
-        include_str!("../../data/residual_limits.csv"),
     ];
 
     /// The whole library travels in the one-file page, whose size is bounded.
