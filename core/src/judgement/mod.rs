@@ -1,6 +1,8 @@
-//! What the numbers mean: balance, readings of a disputed constant, uncertainty.
+//! What the numbers mean: balance, readings of a disputed constant, uncertainty, room air.
 
+pub mod air;
 pub mod balance;
 pub mod explain;
 pub mod readings;
+pub mod student;
 pub mod uncertainty;

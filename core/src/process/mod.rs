@@ -2,6 +2,11 @@
 
 pub mod concentrate;
 pub mod counter_current;
+pub mod extract_workup;
+pub mod henry;
 pub mod isolate;
 pub mod make_up;
 pub mod portions;
+pub mod strip;
+pub mod strip_fit;
+pub mod vapour;
