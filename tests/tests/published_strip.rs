@@ -12,15 +12,15 @@ use unstir_core::process::extract_workup::{
 };
 use unstir_core::process::henry::{
     air_over_water, hcp_at, hcp_from_mol_per_l_atm, hcp_from_solubility, kpa_per_mole_fraction, left_after_gas,
-    mole_fraction, volatility_from_gamma,
+    volatility_from_gamma,
 };
 use unstir_core::process::portions::solve_rising;
 use unstir_core::process::strip::{left_after_boiling, ppm_from_pde, to_limit, water_off_for};
 use unstir_core::process::strip_fit::{Assay, fit};
 use unstir_core::process::vapour::{
     ATMOSPHERE_KPA, antoine_kpa, boiling_temperature, boils_at_other_pressure_c, boils_where, clausius_clapeyron,
-    heat_of_vaporisation, mg_per_m3_to_ppm, molar_volume_l, ppm_to_mg_per_m3, raoult, saturated_air, two_layers_boil_c,
-    two_layers_solvent_mass_fraction, vapour_pressure, water_boils_c, water_kpa,
+    heat_of_vaporisation, layer_purity, mg_per_m3_to_ppm, molar_volume_l, mole_fraction, ppm_to_mg_per_m3, raoult,
+    saturated_air, two_layers_boil_c, two_layers_solvent_mass_fraction, vapour_pressure, water_boils_c, water_kpa,
 };
 
 /// Constants of one check, without a range to speak of.
@@ -312,8 +312,9 @@ fn work_out(c: &Case) -> Vec<(String, f64)> {
             .expected
             .keys()
             .map(|id| {
-                let constants = solvent(id).and_then(|s| s.antoine).expect("constants");
-                (id.clone(), two_layers_boil_c(&constants, ATMOSPHERE_KPA).expect("a temperature"))
+                let s = solvent(id).expect("the solvent");
+                let boils = s.antoine.and_then(|a| two_layers_boil_c(&a, layer_purity(&s), ATMOSPHERE_KPA));
+                (id.clone(), boils.expect("a temperature"))
             })
             .collect(),
         "S-03" => {
@@ -367,7 +368,7 @@ proptest! {
         let t = t.clamp(a.low_c, a.high_c);
         let p = vapour_pressure(&a, t).unwrap().value;
         prop_assert!((boiling_temperature(&a, p).unwrap().value - t).abs() < 1e-9);
-        prop_assert!(two_layers_boil_c(&a, p).unwrap() < t);
+        prop_assert!(two_layers_boil_c(&a, (1.0, 1.0), p).unwrap() < t);
         prop_assert!((water_boils_c(water_kpa(t)) - t).abs() < 1e-3);
     }
 
@@ -436,7 +437,7 @@ proptest! {
     #[test]
     fn nothing_panics(a in any::<f64>(), b in any::<f64>(), c in any::<f64>()) {
         let constants = Antoine { a, b, c, low_c: a, high_c: b, kind: AntoineKind::Fitted };
-        let _ = (vapour_pressure(&constants, c), boiling_temperature(&constants, a), two_layers_boil_c(&constants, b));
+        let _ = (vapour_pressure(&constants, c), boiling_temperature(&constants, a), two_layers_boil_c(&constants, (1.0, 1.0), b));
         let _ = (to_limit(a, b, c, &[a]), student_t(a, 3), rinse_volume_ml(a, 2, b), agent_needed_g(a, b, c));
         let _ = fit(&[Assay { hours: a, mg_per_l: b }, Assay { hours: c, mg_per_l: a }, Assay { hours: b, mg_per_l: c }])
             .map(|f| (f.value.time_to(a), f.value.at(b)));

@@ -177,15 +177,8 @@ pub fn hours_to_limit(room: &RoomIn, limit_ppm: f64) -> Option<f64> {
 ///
 /// The lowest of the lists counts, averages apart from short-term limits and ceilings.
 pub fn beside_limits(room: &RoomIn, air: &RoomAir, limits: &ExposureLimits, lel_vol_pct: Option<f64>) -> BesideLimits {
-    let lowest = |of: &[Option<f64>]| of.iter().flatten().copied().reduce(f64::min);
     let twa = limits.strictest_twa_ppm;
-    let short = lowest(&[
-        limits.osha_stel_ppm,
-        limits.osha_ceiling_ppm,
-        limits.niosh_stel_ppm,
-        limits.niosh_ceiling_ppm,
-        limits.eu_stel_ppm,
-    ]);
+    let short = limits.strictest_short_ppm();
     BesideLimits {
         mean_over_twa: twa.map(|l| air.mean_8h_ppm / l),
         peak_over_twa: twa.map(|l| air.peak_ppm / l),

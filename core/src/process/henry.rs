@@ -86,15 +86,6 @@ pub fn gamma_from_solubility(mole_fraction: f64) -> f64 {
     1.0 / mole_fraction
 }
 
-/// Mole fraction [-] of a substance of molar mass `m` [g/mol] from its mass fraction `w` [-] in
-/// another of molar mass `m_other` [g/mol].
-///
-/// `x = (w/M)/(w/M + (1 − w)/M')`.
-/// Reference: definition; water 8.6e−4 in chloroform, x 0.00567 (IUPAC-NIST Solubility Database).
-pub fn mole_fraction(w: f64, m: f64, m_other: f64) -> f64 {
-    w / m / (w / m + (1.0 - w) / m_other)
-}
-
 /// Fraction of a dissolved volatile left [-] when `gas_over_liquid` volumes of gas have passed
 /// through one volume of liquid.
 ///
@@ -119,7 +110,7 @@ pub fn dissolved_boils_c(henry: &Henry, mol_per_m3: f64, kpa: f64) -> Option<f64
 mod tests {
     use super::*;
     use crate::library::solvents::solvents;
-    use crate::process::vapour::ATMOSPHERE_KPA;
+    use crate::process::vapour::{ATMOSPHERE_KPA, mole_fraction};
 
     /// Henry constants come from another compilation than solubility and vapour pressure. MEK is
     /// left out, and ethyl acetate and 2-methyltetrahydrofuran get more room: their saturated

@@ -116,9 +116,12 @@ pub fn exposure(mg_per_l: f64, serving_ml: f64, servings_per_day: f64, pde_mg_pe
         return None;
     }
     let over_pde = mg_per_day / pde_mg_per_day;
+    let short = |v: f64| if v > 0.0 && v < 0.01 { format!("{v:.1e}") } else { format!("{v:.2}") };
     let sentence = format!(
-        "{mg_per_day:.3} mg a day is {over_pde:.3} times the daily exposure of {pde_mg_per_day} mg listed for medicines. \
-         This compares two numbers; it does not say that the liquid may be drunk."
+        "{} mg a day is {} times the daily exposure of {pde_mg_per_day} mg listed for medicines. \
+         This compares two numbers; it does not say that the liquid may be drunk.",
+        short(mg_per_day),
+        short(over_pde)
     );
     Some(Exposure { mg_per_serving, mg_per_day, over_pde, sentence })
 }
