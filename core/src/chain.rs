@@ -11,7 +11,7 @@ use crate::process::acidity::{self, Acidity};
 use crate::process::concentrate::{self, Liquor};
 use crate::process::make_up::{self, LossRow, MadeUp, MakeUpPlan};
 use crate::process::portions::{self, PortionIn, StageRow, StagesIn, StagesOut, removed, solve_rising};
-use crate::process::strip::{self, StripPlan};
+use crate::process::strip_plan::{self, StripPlan};
 use crate::process::{counter_current, isolate};
 use crate::solution::dose::{self, Buffer, Dose};
 use crate::solution::ionisation::{Constant, constants_in_use, speciate};
@@ -322,7 +322,7 @@ impl Chain {
     /// Stripping the raffinate.
     pub fn strip(&self, study: &Study) -> Option<StripPlan> {
         let made_up = study.make_up.made_up_to_ml.as_ref().map_or(self.make_up_ml, |q| q.value);
-        strip::strip(study, self.liquor.brix.unwrap_or(0.0), self.raffinate_ml, made_up)
+        strip_plan::strip(study, self.liquor.brix.unwrap_or(0.0), self.raffinate_ml, made_up)
     }
 
     /// Bringing the raffinate to strength.

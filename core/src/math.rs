@@ -36,5 +36,10 @@ pub fn sqrt(x: f64) -> f64 {
     libm::sqrt(x)
 }
 
+/// Arc tangent [rad].
+pub fn atan(x: f64) -> f64 {
+    libm::atan(x)
+}
+
 /// `ln 10` [-].
 pub const LN_10: f64 = core::f64::consts::LN_10;

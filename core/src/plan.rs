@@ -14,7 +14,7 @@ use crate::process::concentrate::Liquor;
 use crate::process::isolate::{self, IsolateResult};
 use crate::process::make_up::MakeUpPlan;
 use crate::process::portions::StageRow;
-use crate::process::strip::StripPlan;
+use crate::process::strip_plan::StripPlan;
 use crate::solution::dose::Dose;
 use crate::solution::ionisation::{Constant, constants_in_use, constants_of, speciate};
 use crate::study::{Problem, Study, check, words_of};

@@ -64,7 +64,7 @@ pub(super) fn solvent_row(s: &Solvent, liquor_density: Option<f64>) -> SolventRo
         facts: facts(s, liquor_density),
         limits: exposure_limits_for(&s.id).map(|l| limit_facts(&l)).unwrap_or_default(),
         codes,
-        cautions: at_step(&cautions_for(&s.id), CautionStep::Solvent),
+        cautions: before_choosing(&cautions_for(&s.id)),
         note: s.note.clone(),
     }
 }
@@ -162,6 +162,12 @@ fn capital(text: &str) -> String {
 pub fn cite(source: &Source) -> String {
     let detail = if source.detail.is_empty() { String::new() } else { format!("; {}", source.detail) };
     format!("{}{detail} [{}]", source.citation, source.checked.word())
+}
+
+/// What to know before choosing: the cautions for that step, or all where it has none of its own.
+fn before_choosing(all: &[Caution]) -> Vec<CautionText> {
+    let own = at_step(all, CautionStep::Solvent);
+    if own.is_empty() { all.iter().flat_map(|c| at_step(std::slice::from_ref(c), c.step)).collect() } else { own }
 }
 
 /// The cautions of `all` that belong to `step`.

@@ -4,7 +4,7 @@ use super::format::{fixed, measured, percent, significant};
 use crate::state::work::Good;
 use unstir_core::library::residual::limits_for;
 use unstir_core::plan::Plan;
-use unstir_core::process::strip::StripPlan;
+use unstir_core::process::strip_plan::StripPlan;
 use unstir_core::study::Study;
 
 /// Stripping in one line; empty for a solvent the library does not hold.

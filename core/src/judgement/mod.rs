@@ -1,8 +1,10 @@
-//! What the numbers mean: balance, solvents compared, readings of a disputed constant, uncertainty.
+//! What the numbers mean: balance, solvents compared, readings of a disputed constant, uncertainty,
+//! room air.
 
+pub mod air;
 pub mod balance;
 pub mod explain;
-pub mod line;
 pub mod rank;
 pub mod readings;
+pub mod student;
 pub mod uncertainty;

@@ -175,6 +175,7 @@ mod tests {
     fn every_solvent_says_how_to_vent_and_where_waste_goes() {
         for s in solvents() {
             let own = cautions_for(&s.id);
+            assert!(own.iter().any(|c| c.step == CautionStep::Solvent), "{}", s.id);
             assert!(own.iter().any(|c| c.step == CautionStep::Portions), "{}", s.id);
             assert!(own.iter().any(|c| c.what_to_do.contains("waste stream")), "{}", s.id);
             assert!(!s.is_flammable() || own.iter().any(|c| c.what_to_do.contains("No flame")), "{}", s.id);

@@ -50,6 +50,8 @@ pub struct ExposureLimits {
     pub special_rules: String,
     /// Source of those rules.
     pub special_source: Source,
+    /// Short-term limit of those rules [ppm], where they set one.
+    pub special_short_ppm: Option<f64>,
     /// Lowest of the averages above, and of the special rules [ppm]. It looks at averages
     /// only: short-term limits and ceilings hold besides.
     pub strictest_twa_ppm: Option<f64>,
@@ -57,6 +59,21 @@ pub struct ExposureLimits {
     pub strictest_basis: String,
     /// A remark; often blank.
     pub note: String,
+}
+
+impl ExposureLimits {
+    /// Lowest short-term limit or ceiling of all the lists and rules [ppm]; `None` when none is listed.
+    pub fn strictest_short_ppm(&self) -> Option<f64> {
+        let all = [
+            self.osha_stel_ppm,
+            self.osha_ceiling_ppm,
+            self.niosh_stel_ppm,
+            self.niosh_ceiling_ppm,
+            self.eu_stel_ppm,
+            self.special_short_ppm,
+        ];
+        all.into_iter().flatten().reduce(f64::min)
+    }
 }
 
 /// Limits of every solvent, in the order of the file.
@@ -97,6 +114,7 @@ fn parse(row: &Row) -> Result<ExposureLimits, String> {
         eu_source: row.source("source_eu")?,
         special_rules: row.owned("special_rules")?,
         special_source: row.source("source_special")?,
+        special_short_ppm: row.optional_number("special_short_ppm")?,
         strictest_twa_ppm: row.optional_number("strictest_twa_ppm")?,
         strictest_basis: row.owned("strictest_basis")?,
         note: row.owned("note")?,
@@ -164,6 +182,9 @@ mod tests {
         assert_eq!(dichloromethane.osha_stel_ppm, Some(125.0)); // same
         assert_eq!(dichloromethane.strictest_twa_ppm, Some(2.0)); // 40 CFR 751.109
         assert!(dichloromethane.special_rules.contains("16 ppm"));
+        assert_eq!(dichloromethane.strictest_short_ppm(), Some(16.0)); // 40 CFR 751.109
+        assert_eq!(exposure_limits_for("1_butanol").unwrap().strictest_short_ppm(), Some(50.0)); // NIOSH ceiling
+        assert_eq!(exposure_limits_for("mct_oil").unwrap().strictest_short_ppm(), None);
         let ester = exposure_limits_for("n_butyl_acetate").unwrap();
         assert_eq!((ester.eu_twa_ppm, ester.eu_stel_ppm), (Some(50.0), Some(150.0))); // Directive (EU) 2019/1831
         assert_eq!(ester.eu_source.checked, Checked::Read);

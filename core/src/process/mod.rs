@@ -1,10 +1,14 @@
-//! One file per step of the flow.
+//! One file per step of the flow, and what the steps share.
 
 pub mod acidity;
 pub mod concentrate;
 pub mod counter_current;
+pub mod extract_workup;
+pub mod henry;
 pub mod isolate;
 pub mod make_up;
 pub mod portions;
 pub mod strip;
+pub mod strip_fit;
+pub mod strip_plan;
 pub mod vapour;

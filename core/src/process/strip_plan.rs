@@ -1,17 +1,23 @@
-//! Strip: removing dissolved solvent from the raffinate.
+//! Stripping the raffinate of a study: what it takes, how far it has come, and the residues to
+//! reach.
 
-use crate::judgement::line::line;
 use crate::library::residual::{Purpose, limits_for};
 use crate::library::solvents::{Solvent, solvent};
-use crate::math;
 use crate::plan::Interval;
 use crate::process::concentrate::density_g_per_ml;
-use crate::process::vapour::{water_boiling_point_c, water_vapour_pressure_kpa};
+use crate::process::henry::{hcp_at, volatility, volatility_from_gamma};
+use crate::process::strip::{limit_mg_per_l, water_off_for, water_off_per_decade};
+use crate::process::strip_fit::{Assay, fit};
+use crate::process::vapour::{mole_fraction, water_boils_c, water_kpa};
 use crate::study::Study;
 use serde::Serialize;
 
 /// Molar mass of water [g/mol]; IUPAC (2021).
 const WATER_MOLAR_MASS: f64 = 18.015;
+/// Temperature of solubilities and Henry constants [°C].
+const REFERENCE_C: f64 = 25.0;
+/// Pressures at which water boils as a liquid and the equation holds [kPa].
+const BOILS_KPA: (f64, f64) = (0.62, 1000.0);
 /// Pressure of the standard atmosphere [kPa].
 pub const ATMOSPHERE_KPA: f64 = 101.325;
 
@@ -35,7 +41,7 @@ pub struct StripPlan {
     pub water_per_decade: Option<f64>,
     /// Fitted from the readings; none with fewer than three, or if they do not fall.
     #[serde(skip_serializing_if = "Option::is_none")]
-    pub fit: Option<StripFit>,
+    pub fit: Option<StripRate>,
     /// Residues to reach.
     pub limits: Vec<StripLimit>,
     /// The last reading, brought to the made-up liquid, as a serving.
@@ -47,7 +53,7 @@ pub struct StripPlan {
 
 /// First-order decay fitted to the readings.
 #[derive(Clone, Debug, PartialEq, Serialize)]
-pub struct StripFit {
+pub struct StripRate {
     /// Rate constant [1/min] with its 95 % interval.
     pub rate: Interval,
     /// Time to a tenth [min].
@@ -85,52 +91,27 @@ pub struct StripServing {
     pub daily_exposure_mg: Option<f64>,
 }
 
-/// Concentration of water in water at 25 °C [mol/m³].
-const WATER_MOL_PER_M3: f64 = 55_340.0;
-
-/// Volatility of a dissolved solvent relative to water, dilute, at 25 °C [-]; none if neither a Henry
-/// constant nor vapour pressure and solubility are held.
+/// Volatility of a dissolved solvent relative to water, dilute, at 25 °C [-]: by its measured Henry
+/// constant, else by vapour pressure and solubility (`γ∞ = 1/x`); none if neither is held.
 ///
-/// `α = K_H/p_w`, Henry's constant on mole fractions `K_H = c_w/Hcp` where it was measured; else that
-/// of [`henry_from_saturation_kpa`].
-/// Valid: dilute; sugar and salt raise it further.
-/// Reference: definition; Henry constants R. Sander, Atmos. Chem. Phys. 15 (2015) 4399.
+/// See [`volatility`] and [`volatility_from_gamma`].
 pub fn relative_volatility(s: &Solvent) -> Option<f64> {
-    let measured = s.henry.map(|h| WATER_MOL_PER_M3 / h.hcp_25c_mol_m3_pa / 1000.0);
-    Some(measured.or_else(|| henry_from_saturation_kpa(s))? / water_vapour_pressure_kpa(25.0))
+    s.henry.map(|h| volatility(hcp_at(&h, REFERENCE_C), REFERENCE_C)).or_else(|| volatility_by_saturation(s))
 }
 
-/// Henry's constant on mole fractions [kPa] from vapour pressure and solubility, 25 °C.
-///
-/// `K_H = p°/x_s`: the organic layer counts as pure, so that its vapour pressure over the mole
-/// fraction `x_s` of a saturated solution is the constant.
-/// Valid: solubility below about 10 %.
-/// Reference: J. Kuo, Practical Design Calculations for Groundwater and Soil Remediation (2014).
-pub fn henry_from_saturation_kpa(s: &Solvent) -> Option<f64> {
-    let pct = s.solubility_in_water_mass_pct?;
-    let solvent = pct / s.molar_mass_g_mol;
-    let fraction = solvent / (solvent + (100.0 - pct) / WATER_MOLAR_MASS);
-    Some(s.vapour_pressure_25c_kpa? / fraction)
-}
-
-/// Fraction of the water that leaves while a dilute volatile falls to `left` of its amount [-].
-///
-/// Rayleigh at constant relative volatility α: `n/n₀ = (W/W₀)^α`.
-/// Valid: vapour in equilibrium with a well-mixed liquid; nothing condenses back. A floor: boiling
-/// in practice takes more.
-/// Reference: Lord Rayleigh, Phil. Mag. 4 (1902) 521; α = 100, 2 % boiled off leaves 0.1326.
-pub fn water_for(left: f64, alpha: f64) -> f64 {
-    1.0 - math::exp(math::ln(left.clamp(1e-300, 1.0)) / alpha)
+fn volatility_by_saturation(s: &Solvent) -> Option<f64> {
+    let x = mole_fraction(s.solubility_in_water_mass_pct? / 100.0, s.molar_mass_g_mol, WATER_MOLAR_MASS);
+    Some(volatility_from_gamma(1.0 / x, s.vapour_pressure_25c_kpa?, water_kpa(REFERENCE_C)))
 }
 
 /// Stripping of the raffinate of `study`; none for a solvent that the library does not hold.
 ///
-/// The start is the solvent's saturation of the water of the liquor at 25 °C; `ln c` of the
-/// readings is fitted by a straight line in time, with Student's t; a limit for the made-up liquid
+/// The start is the solvent's saturation of the water of the liquor at 25 °C; the
+/// readings are fitted by [`fit`]; a limit for the made-up liquid
 /// is brought to the raffinate by `V_made_up/V_raffinate`.
 /// Valid: as the parts; first order holds for a well-stirred liquid at constant conditions. Listed
 /// limits in mg/kg are taken as mg/L times the density of the feed.
-/// Reference: first-order kinetics; regression as in [`crate::judgement::line`].
+/// Reference: see [`super::strip`], [`super::strip_fit`] and [`super::vapour`].
 pub fn strip(study: &Study, liquor_brix: f64, raffinate_ml: f64, made_up_ml: f64) -> Option<StripPlan> {
     let s = solvent(&study.solvent.id)?;
     let stated = &study.strip;
@@ -141,20 +122,21 @@ pub fn strip(study: &Study, liquor_brix: f64, raffinate_ml: f64, made_up_ml: f64
     let start_mg_per_l = s.solubility_in_water_mass_pct.map(saturated);
     let dilution = raffinate_ml / made_up_ml;
 
-    let points: Vec<(f64, f64)> = stated
+    // Readings below detection say nothing to a logarithm.
+    let assays: Vec<Assay> = stated
         .readings
         .iter()
         .filter(|r| r.mg_per_l.value > 0.0)
-        .map(|r| (r.minutes.value, math::ln(r.mg_per_l.value)))
+        .map(|r| Assay { hours: r.minutes.value / 60.0, mg_per_l: r.mg_per_l.value })
         .collect();
-    let fitted = line(&points).filter(|l| l.slope < 0.0);
-    let fit = fitted.map(|l| {
-        let half = l.t95() * l.slope_error;
-        StripFit {
-            rate: Interval { value: -l.slope, low: -l.slope - half, high: -l.slope + half, unit: "/min" },
-            minutes_per_decade: std::f64::consts::LN_10 / -l.slope,
-            start_mg_per_l: math::exp(l.intercept),
-            readings: points.len(),
+    let fitted = fit(&assays).ok().map(|o| o.value).filter(|f| f.readings >= 3 && f.rate_per_h > 0.0);
+    let per_minute = fitted.as_ref().map(|f| {
+        let (low, high) = f.rate_band_per_h.unwrap_or((f.rate_per_h, f.rate_per_h));
+        StripRate {
+            rate: Interval { value: f.rate_per_h / 60.0, low: low / 60.0, high: high / 60.0, unit: "/min" },
+            minutes_per_decade: std::f64::consts::LN_10 / f.rate_per_h * 60.0,
+            start_mg_per_l: f.start_mg_per_l,
+            readings: f.readings,
         }
     });
 
@@ -165,20 +147,21 @@ pub fn strip(study: &Study, liquor_brix: f64, raffinate_ml: f64, made_up_ml: f64
     }
     for l in limits_for(&s.id, study.goal.purpose).listed {
         if let Some(v) = l.mg_per_kg {
-            wanted.push((format!("{}: {}", l.list.name(), l.scope), v * made_up_density));
+            wanted.push((format!("{}: {}", l.list.name(), l.scope), limit_mg_per_l(v, made_up_density)));
         }
     }
     let limits = wanted
         .into_iter()
         .map(|(what, limit_mg_per_l)| {
             let raffinate_mg_per_l = limit_mg_per_l / dilution;
-            let minutes = fitted.filter(|_| raffinate_mg_per_l > 0.0).map(|l| {
-                let (t, error) = l.x_at(math::ln(raffinate_mg_per_l));
-                let half = l.t95() * error;
-                Interval { value: t.max(0.0), low: (t - half).max(0.0), high: (t + half).max(0.0), unit: "min" }
+            let minutes = fitted.as_ref().and_then(|f| f.time_to(raffinate_mg_per_l).ok()).map(|o| {
+                let t = o.value;
+                let (early, late) = (t.early_h.unwrap_or(0.0), t.late_h.unwrap_or(f64::INFINITY));
+                Interval { value: t.hours * 60.0, low: early * 60.0, high: late * 60.0, unit: "min" }
             });
-            let water_fraction =
-                start_mg_per_l.zip(alpha).map(|(start, a)| water_for((raffinate_mg_per_l / start).min(1.0), a));
+            let water_fraction = start_mg_per_l
+                .zip(alpha)
+                .and_then(|(start, a)| water_off_for((raffinate_mg_per_l / start).min(1.0), a));
             StripLimit { what, limit_mg_per_l, raffinate_mg_per_l, minutes, water_fraction }
         })
         .collect();
@@ -189,11 +172,11 @@ pub fn strip(study: &Study, liquor_brix: f64, raffinate_ml: f64, made_up_ml: f64
     });
     Some(StripPlan {
         pressure_kpa,
-        boils_at_c: water_boiling_point_c(pressure_kpa),
+        boils_at_c: (pressure_kpa >= BOILS_KPA.0 && pressure_kpa <= BOILS_KPA.1).then(|| water_boils_c(pressure_kpa)),
         start_mg_per_l,
         relative_volatility: alpha,
-        water_per_decade: alpha.map(|a| water_for(0.1, a)),
-        fit,
+        water_per_decade: alpha.and_then(water_off_per_decade),
+        fit: per_minute,
         limits,
         serving,
         dilution,
@@ -208,14 +191,14 @@ mod tests {
 
     const TEXT: &str = include_str!("../../../tests/data/studies/neutral-alkaloid.json");
 
-    /// Henry's constants by vapour pressure and solubility beside those measured (R. Sander 2015, as
-    /// held in the library): two routes, within a factor of 1.6 for the sparingly soluble.
+    /// Volatility by a measured Henry constant (R. Sander 2015, as held in the library) and by vapour
+    /// pressure and solubility: two routes, within a factor of 1.6 for the sparingly soluble.
     #[test]
-    fn two_routes_to_the_henry_constant_agree() {
+    fn two_routes_to_the_volatility_agree() {
         let mut compared = 0;
         for s in solvents().iter().filter(|s| s.solubility_in_water_mass_pct.is_some_and(|p| p < 10.0)) {
-            let (Some(h), Some(by_saturation)) = (s.henry, henry_from_saturation_kpa(s)) else { continue };
-            let ratio = by_saturation / (WATER_MOL_PER_M3 / h.hcp_25c_mol_m3_pa / 1000.0);
+            let (Some(_), Some(by_saturation)) = (s.henry, volatility_by_saturation(s)) else { continue };
+            let ratio = by_saturation / relative_volatility(s).unwrap();
             assert!(ratio > 1.0 / 1.6 && ratio < 1.6, "{} {ratio}", s.id);
             compared += 1;
         }
@@ -223,13 +206,6 @@ mod tests {
         // By hand: c_w/Hcp/p_w = 55 340/0.0036/3170 = 4850.
         let dcm = relative_volatility(&solvent("dichloromethane").unwrap()).unwrap();
         assert!((dcm - 4850.0).abs() < 20.0, "{dcm}");
-    }
-
-    /// Rayleigh, by hand: α = 100, 2 % of the water gone leaves 0.98^100 = 0.13262.
-    #[test]
-    fn rayleigh() {
-        assert!((water_for(0.132_62, 100.0) - 0.02).abs() < 1e-6);
-        assert_eq!(water_for(1.0, 50.0), 0.0);
     }
 
     /// By hand: 1000 mg/L falling tenfold every 10 min reaches 1 mg/L after 30 min, and the limit
