@@ -4,6 +4,7 @@ use crate::chain::{Chain, to_hundredths};
 use crate::judgement::balance::Balance;
 use crate::judgement::explain;
 use crate::judgement::readings::{self, ReadingsReport};
+use crate::judgement::spill::{SpillPlan, spill};
 use crate::judgement::uncertainty::{Propagated, interval, propagate};
 use crate::math;
 use crate::order::put_in_order;
@@ -220,6 +221,9 @@ pub struct Plan {
     pub isolate: Option<IsolateResult>,
     /// Bringing the raffinate to strength.
     pub make_up: MakeUpPlan,
+    /// Air of the room after a spill; none for a solvent that the library does not hold.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub spill: Option<SpillPlan>,
     /// Stripping; none for a solvent that the library does not hold.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub strip: Option<StripPlan>,
@@ -321,6 +325,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         levels: chain.levels(study),
         inverse,
         isolate,
+        spill: spill(study, headline.solvent_total_ml.value),
         strip: chain.strip(study),
         make_up: chain.make_up(study),
         balance: chain.balance.clone(),

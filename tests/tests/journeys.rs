@@ -342,6 +342,11 @@ fn solvents_are_ranked_for_this_liquid() {
         let first = page.text(".choice").await?;
         assert!(first.contains("D of caffeine") && first.contains("9.4"), "{first}");
         assert!(page.text(".choices").await?.contains("no K known"));
+        // 75 mL of dichloromethane in 50 m³ is 564 ppm, 35 times 16 ppm.
+        let spilled = page.text("#solvent").await?;
+        assert!(spilled.contains("mL spilled in 50") && spilled.contains("35 times the lowest listed"), "{spilled}");
+        page.type_at("room.changes_per_h", "0").await?;
+        assert!(page.text("#solvent").await?.contains("By ventilation alone it does not fall"));
         page.choose("ranking.order", "boiling").await?;
         assert!(page.text(".choice").await?.contains("diethyl ether"));
         page.tick("no peroxide formers").await?;

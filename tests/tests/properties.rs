@@ -121,6 +121,7 @@ prop_compose! {
             note: String::new(),
             goal: Goal { removal_fraction: 0.9.into(), purpose: Default::default() },
             strip: Default::default(),
+            room: Default::default(),
             feed: Feed {
                 volume_ml: volume_ml.clone(),
                 ph: Some(ph),

@@ -1,13 +1,13 @@
 //! Solvent: the one in use with its cautions, the partition coefficients, and the library.
 
-use super::bind::{button, hinted, number, of_draft, of_plan, text, words};
+use super::bind::{button, fixed_number, hinted, number, of_draft, of_plan, text, words};
 use super::partition::PartitionFields;
 use super::ranking::Ranking;
 use super::step::{Cautions, Step};
-use crate::parts::live;
+use crate::parts::{Working, live, live_view};
 use crate::state::NumberText;
 use crate::state::work::work;
-use crate::view_model::solvent::cautions_at;
+use crate::view_model::solvent::{cautions_at, spill_sentences};
 use leptos::prelude::*;
 use unstir_core::library::cautions::CautionStep;
 use unstir_core::library::solvents::solvent;
@@ -36,6 +36,7 @@ pub fn SolventStep() -> impl IntoView {
             </p>
             <OwnSolvent/>
             <Cautions list=cautions/>
+            <Spill/>
             <PartitionFields/>
             <Ranking/>
         </Step>
@@ -73,5 +74,50 @@ fn OwnSolvent() -> impl IntoView {
         <p class="notice" hidden=live(move || !own.get())>
             "The library holds nothing about this solvent: find its hazards, limits and layer in its safety data sheet before opening it."
         </p>
+    }
+}
+
+/// The air of the room if the solvent is spilled.
+#[component]
+fn Spill() -> impl IntoView {
+    let sentences = of_plan(|g| spill_sentences(&g.plan));
+    view! {
+        <div hidden=live(move || sentences.with(Vec::is_empty))>
+            <h3>"If it is spilled"</h3>
+            <div class="fields">
+                {fixed_number(
+                    hinted("volume spilled", "mL", "all of the solvent if left empty"),
+                    "room.spill_ml",
+                    |d| &d.room.spill,
+                    |d| &mut d.room.spill,
+                )}
+                {fixed_number(
+                    hinted("room", "m³", "50 if left empty"),
+                    "room.volume_m3",
+                    |d| &d.room.volume,
+                    |d| &mut d.room.volume,
+                )}
+                {fixed_number(
+                    hinted("air changes", "1/h", "2 if left empty"),
+                    "room.changes_per_h",
+                    |d| &d.room.changes,
+                    |d| &mut d.room.changes,
+                )}
+            </div>
+            <ul class="words">
+                {live_view(move || sentences.get().into_iter().map(|s| view! { <li>{s}</li> }).collect_view())}
+            </ul>
+            <Working
+                title="the air of the room"
+                lines=Signal::stored(
+                    vec![
+                        "c₀ = m/V_room; c = c₀·exp(−n·t/k), n air changes, k = 3 the mixing factor".to_owned(),
+                        "ppm = (mg/m³)·24.055/M at 20 °C".to_owned(),
+                    ],
+                )
+                reference="single-zone mass balance, J. Kuo, Practical Design Calculations; limits as listed in the row of the solvent"
+                validity="an order of magnitude, for a warning; not a measurement, and not the air beside the spill"
+            />
+        </div>
     }
 }

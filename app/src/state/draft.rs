@@ -43,6 +43,9 @@ pub struct Draft {
     pub extraction: ExtractionDraft,
     /// The isolate, once weighed.
     pub isolate: IsolateDraft,
+    /// The room.
+    #[serde(default)]
+    pub room: RoomDraft,
     /// Stripping the raffinate.
     #[serde(default)]
     pub strip: StripDraft,
@@ -296,6 +299,17 @@ pub struct IsolateDraft {
     pub residual_solvent: NumberText,
 }
 
+/// The room, as typed; all optional.
+#[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
+pub struct RoomDraft {
+    /// Volume [m³].
+    pub volume: NumberText,
+    /// Air changes [1/h].
+    pub changes: NumberText,
+    /// Solvent spilled [mL].
+    pub spill: NumberText,
+}
+
 /// Stripping, as typed.
 #[derive(Clone, Debug, Default, PartialEq, Serialize, Deserialize)]
 pub struct StripDraft {
@@ -381,6 +395,7 @@ impl Draft {
             extraction: ExtractionDraft::default(),
             isolate: IsolateDraft::default(),
             purpose: Purpose::default(),
+            room: RoomDraft::default(),
             strip: StripDraft::default(),
             losses: Vec::new(),
             made_up_to: NumberText::default(),

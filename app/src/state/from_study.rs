@@ -13,6 +13,11 @@ impl Draft {
         d.goal = NumberText::from_quantity(&study.goal.removal_fraction);
         d.purpose = study.goal.purpose;
         d.take_strip(&study.strip);
+        d.room = RoomDraft {
+            volume: NumberText::from_optional(study.room.volume_m3.as_ref()),
+            changes: NumberText::from_optional(study.room.changes_per_h.as_ref()),
+            spill: NumberText::from_optional(study.room.spill_ml.as_ref()),
+        };
         d.feed.volume = NumberText::from_quantity(&study.feed.volume_ml);
         d.feed.ph = NumberText::from_optional(study.feed.ph.as_ref());
         d.feed.co2 = NumberText::from_optional(study.feed.co2_g_per_l.as_ref());
@@ -234,6 +239,9 @@ mod tests {
         study.feed.co2_g_per_l = Some(5.0.into());
         study.goal.purpose = Purpose::Medicine;
         study.strip.pressure_kpa = Some(20.0.into());
+        study.room.volume_m3 = Some(60.0.into());
+        study.room.changes_per_h = Some(6.0.into());
+        study.room.spill_ml = Some(100.0.into());
         study.strip.serving_ml = Some(250.0.into());
         study.strip.limit_mg_per_l = Some(0.5.into());
         study.strip.readings.push(StripReading { minutes: 5.0.into(), mg_per_l: Quantity::with_u(12.0, 0.5) });

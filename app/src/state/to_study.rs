@@ -4,7 +4,7 @@ use super::draft::*;
 use super::number_text::{NumberText, number};
 use unstir_core::study::{
     Amount, Concentrate, ConcentrateTo, Disputed, EnteringSolvent, Extraction, Feed, Goal, Ingredient, Isolate, Loss,
-    LossAmount, MakeUp, PartitionEntry, Portion, Problem, Quantity, Reading, Scheme, Site, SolventChoice, Strip,
+    LossAmount, MakeUp, PartitionEntry, Portion, Problem, Quantity, Reading, Room, Scheme, Site, SolventChoice, Strip,
     StripReading, StrongIon, Study, VERSION, check,
 };
 
@@ -101,6 +101,11 @@ impl Draft {
             partition: self.read_partition(&mut r),
             extraction: self.read_extraction(&mut r),
             isolate: self.isolate.weighed.then(|| read_isolate(&self.isolate, &mut r)),
+            room: Room {
+                volume_m3: r.optional(&self.room.volume, "room.volume_m3", "volume of the room"),
+                changes_per_h: r.optional(&self.room.changes, "room.changes_per_h", "air changes"),
+                spill_ml: r.optional(&self.room.spill, "room.spill_ml", "volume spilled"),
+            },
             strip: read_strip(&self.strip, &mut r),
             losses: self.losses.iter().enumerate().map(|(i, l)| read_loss(l, i, &mut r)).collect(),
             make_up: MakeUp { made_up_to_ml: r.optional(&self.made_up_to, "make_up.made_up_to_ml", "made-up volume") },

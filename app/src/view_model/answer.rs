@@ -77,7 +77,7 @@ pub fn step_of(path: &str) -> (&'static str, &'static str) {
         ("ionisation", "Ionisation")
     } else if starts("feed") || starts("concentrate") || starts("goal") {
         ("feed", "Feed")
-    } else if starts("solvent") || starts("partition") {
+    } else if starts("solvent") || starts("partition") || starts("room") {
         ("solvent", "Solvent")
     } else if starts("extraction") || starts("stages") {
         ("portions", "Portions")

@@ -10,6 +10,7 @@ use unstir_core::library::solutes::solute_named;
 use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent};
 use unstir_core::library::sources::Source;
 use unstir_core::partition::estimate::estimated_k;
+use unstir_core::plan::Plan;
 
 /// A solvent of the library as a row.
 #[derive(Clone, Debug, PartialEq)]
@@ -193,6 +194,42 @@ pub fn cautions_at(steps: &[CautionStep], solvent: &str) -> Vec<CautionText> {
 pub fn general_cautions_at(steps: &[CautionStep]) -> Vec<CautionText> {
     let any = general_cautions();
     steps.iter().flat_map(|&step| at_step(&any, step)).collect()
+}
+
+/// What a spill would make of the air of the room, in sentences.
+pub fn spill_sentences(plan: &Plan) -> Vec<String> {
+    let Some(s) = &plan.spill else { return Vec::new() };
+    let times = |over: f64| format!("{} times", significant(over, 2));
+    let mut list = vec![format!(
+        "{} mL spilled in {} m³ with {} air changes an hour: up to {} ppm, {} ppm on average over 8 h, if it mixed well.",
+        significant(s.spill_ml, 3),
+        significant(s.room_m3, 3),
+        significant(s.changes_per_h, 2),
+        significant(s.peak_ppm, 2),
+        significant(s.mean_8h_ppm, 2)
+    )];
+    let mut beside = Vec::new();
+    if let Some(over) = s.peak_over_short_term {
+        beside.push(format!("the peak is {} the lowest listed short-term limit", times(over)));
+    }
+    if let Some(over) = s.mean_over_average {
+        beside.push(format!("the average {} the lowest listed average", times(over)));
+    }
+    if let Some(over) = s.peak_over_explosive {
+        beside.push(format!("the peak {} the lower explosive limit", times(over)));
+    }
+    if !beside.is_empty() {
+        list.push(format!("{}.", capital(&beside.join(", "))));
+    }
+    match s.hours_to_average {
+        Some(t) if t > 0.0 => {
+            list.push(format!("Below the lowest listed average again after about {} h.", significant(t, 2)))
+        }
+        Some(_) => {}
+        None => list.push("By ventilation alone it does not fall below a listed average.".to_owned()),
+    }
+    list.extend(s.assumptions.iter().cloned());
+    list
 }
 
 /// A published K, to be taken over with one tap.

@@ -6,5 +6,6 @@ pub mod balance;
 pub mod explain;
 pub mod rank;
 pub mod readings;
+pub mod spill;
 pub mod student;
 pub mod uncertainty;

@@ -88,6 +88,9 @@ fn allowed(path: &str) -> Allowed {
         "volume_ml" => a("the volume", "mL", 0.0, false, 1e6, "give the volume in millilitres"),
         "solvent_ml" => a("the solvent volume", "mL", 0.0, false, 1e6, "give the volume in millilitres"),
         "vessel_ml" => a("the largest vessel", "mL", 0.0, false, 1e6, "give its volume in millilitres"),
+        "volume_m3" => a("the volume of the room", "m³", 1.0, true, 1e5, "length times width times height"),
+        "changes_per_h" => a("the air changes", "1/h", 0.0, true, 100.0, "0 for a closed room"),
+        "spill_ml" => a("the volume spilled", "mL", 0.0, false, 1e6, "leave it empty for all of the solvent"),
         "pressure_kpa" => a("the pressure", "kPa", 0.1, true, 1000.0, "the atmosphere has about 101 kPa"),
         "minutes" => a("the time", "min", 0.0, true, 1e5, "count from when stripping began"),
         "mg_per_l" if path.starts_with("strip") => {

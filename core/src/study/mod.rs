@@ -10,6 +10,7 @@ mod extraction;
 mod feed;
 mod quantity;
 mod read;
+mod room;
 mod strip;
 mod visit;
 
@@ -24,6 +25,7 @@ pub use quantity::{Quantity, Range};
 #[cfg(feature = "schema")]
 pub use read::schema_text;
 pub use read::{MAX_FILE_BYTES, parse, to_text};
+pub use room::Room;
 pub use strip::{Strip, StripReading};
 pub use visit::for_each_quantity;
 
@@ -61,6 +63,9 @@ pub struct Study {
     /// What was weighed after evaporating the extract.
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub isolate: Option<Isolate>,
+    /// The room in which it is done.
+    #[serde(default, skip_serializing_if = "no_room")]
+    pub room: Room,
     /// Stripping the raffinate.
     #[serde(default, skip_serializing_if = "is_unstated")]
     pub strip: Strip,
@@ -82,6 +87,10 @@ pub struct Goal {
     /// What the liquid is for: which lists of residual limits are looked at.
     #[serde(default)]
     pub purpose: Purpose,
+}
+
+fn no_room(room: &Room) -> bool {
+    *room == Room::default()
 }
 
 fn is_unstated(strip: &Strip) -> bool {

@@ -80,6 +80,9 @@ pub fn for_each_quantity(study: &mut Study, f: &mut dyn FnMut(&str, &mut Quantit
         f("isolate.hydrate_waters", &mut i.hydrate_waters);
         f("isolate.residual_solvent_fraction", &mut i.residual_solvent_fraction);
     }
+    maybe("room.volume_m3", &mut study.room.volume_m3, f);
+    maybe("room.changes_per_h", &mut study.room.changes_per_h, f);
+    maybe("room.spill_ml", &mut study.room.spill_ml, f);
     maybe("strip.pressure_kpa", &mut study.strip.pressure_kpa, f);
     for (i, r) in study.strip.readings.iter_mut().enumerate() {
         f(&format!("strip.readings[{i}].minutes"), &mut r.minutes);
