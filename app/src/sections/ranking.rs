@@ -5,7 +5,7 @@ use super::bind::{button, of_draft, of_plan};
 use super::step::Results;
 use crate::parts::{CautionBox, ChoiceField, DataTable, Working, live, live_view};
 use crate::state::work::work;
-use crate::view_model::ranking::{ORDERS, Wish, arrange, beside};
+use crate::view_model::ranking::{Liquid, ORDERS, Wish, arrange, beside};
 use crate::view_model::solvent::{Fact, SolventRow};
 use leptos::prelude::*;
 use unstir_core::judgement::rank::rank;
@@ -19,11 +19,15 @@ const LONGEST_FACT: usize = 90;
 pub fn Ranking() -> impl IntoView {
     let wish = RwSignal::new(Wish::default());
     let picked: RwSignal<Vec<String>> = RwSignal::new(Vec::new());
-    // To two decimals, so that the list is not built anew at each keystroke.
-    let density = of_plan(|g| g.plan.liquor.brix.map(|b| (density_g_per_ml(b) * 100.0).round() / 100.0));
-    let ranks = of_plan(|g| (rank(&g.study).unwrap_or_default(), g.study.feed.target.clone()));
-    let all = Memo::new(move |_| ranks.with(|(r, target)| arrange(r, density.get(), target, &Wish::default())));
-    let rows = Memo::new(move |_| ranks.with(|(r, target)| wish.with(|wish| arrange(r, density.get(), target, wish))));
+    let liquid = of_plan(|g| Liquid {
+        ranks: rank(&g.study).unwrap_or_default(),
+        target: g.study.feed.target.clone(),
+        purpose: g.study.goal.purpose,
+        // To two decimals, so that the list is not built anew at each keystroke.
+        density: g.plan.liquor.brix.map(|b| (density_g_per_ml(b) * 100.0).round() / 100.0),
+    });
+    let all = Memo::new(move |_| liquid.with(|l| arrange(l, &Wish::default())));
+    let rows = Memo::new(move |_| liquid.with(|l| wish.with(|wish| arrange(l, wish))));
     let pair = Memo::new(move |_| {
         picked.with(|p| {
             let row = |i: usize| all.with(|all| all.iter().find(|r| p.get(i) == Some(&r.id)).cloned());
@@ -152,7 +156,10 @@ fn Choice(
             </div>
         }
     });
-    let long = long.into_iter().map(|f| view! { <p class="fact-long">{format!("{}: {}", f.what, f.value)}</p> });
+    let long = long.into_iter().map(|f| {
+        let residue = f.what == "residues";
+        view! { <p class="fact-long" class:residue=residue>{format!("{}: {}", f.what, f.value)}</p> }
+    });
     let codes = row.codes.into_iter().map(|(code, meaning)| view! { <li><strong>{code}</strong>" "{meaning}</li> });
     let cautions = row.cautions.into_iter().map(|caution| view! { <CautionBox caution/> });
     let note = (!row.note.is_empty()).then(|| view! { <p class="quiet">{row.note}</p> });

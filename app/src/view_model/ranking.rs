@@ -1,9 +1,10 @@
 //! The solvents of the library in an order and a choice of the reader's, and two beside each other.
 
 use super::format::{percent, significant};
-use super::solvent::{Fact, SolventRow, solvent_row};
+use super::solvent::{Fact, SolventRow, cite, solvent_row};
 use unstir_core::judgement::rank::{KOrigin, Parted, SolventRank};
 use unstir_core::library::limits::exposure_limits_for;
+use unstir_core::library::residual::{Purpose, limits_for};
 use unstir_core::library::solvents::{Layer, PeroxideClass, Solvent, solvents};
 use unstir_core::order::put_in_order;
 
@@ -62,9 +63,23 @@ pub struct Wish {
 /// Smallest density difference with which layers are sure to part [g/mL]; common practice.
 const PARTS_G_PER_ML: f64 = 0.05;
 
-/// The solvents as wished, for a liquor of this density [g/mL]; `ranks` is empty while there is no
-/// plan.
-pub fn arrange(ranks: &[SolventRank], density: Option<f64>, target: &str, wish: &Wish) -> Vec<SolventRow> {
+/// What the solvents are looked at for.
+#[derive(Clone, Debug, Default, PartialEq)]
+pub struct Liquid {
+    /// How each solvent would do; empty while there is no plan.
+    pub ranks: Vec<SolventRank>,
+    /// Name of the target.
+    pub target: String,
+    /// What the liquid is for.
+    pub purpose: Purpose,
+    /// Density of the liquor [g/mL], if its soluble solids are known.
+    pub density: Option<f64>,
+}
+
+/// The solvents as wished, for this liquid.
+pub fn arrange(liquid: &Liquid, wish: &Wish) -> Vec<SolventRow> {
+    let Liquid { ranks, target, purpose, density } = liquid;
+    let density = *density;
     let mut list: Vec<(f64, SolventRow)> = Vec::new();
     for s in solvents().iter().filter(|s| wanted(s, density, wish)) {
         let rank = ranks.iter().find(|r| r.id == s.id);
@@ -72,6 +87,8 @@ pub fn arrange(ranks: &[SolventRank], density: Option<f64>, target: &str, wish: 
         let mut facts = rank.map(|r| parting_facts(r, target)).unwrap_or_default();
         facts.append(&mut row.facts);
         row.facts = facts;
+        row.facts.extend(residue_lists(&s.id, *purpose));
+        row.limits.extend(residue_facts(&s.id, *purpose));
         if holds(&row, &wish.words) {
             list.push((key(s, rank, density, wish.order), row));
         }
@@ -130,6 +147,25 @@ fn origin_words(p: &Parted) -> &'static str {
     }
 }
 
+/// Which lists speak of residues of this solvent for this purpose.
+fn residue_lists(id: &str, purpose: Purpose) -> Option<Fact> {
+    if purpose == Purpose::Technical {
+        return None;
+    }
+    let mut names: Vec<&str> = limits_for(id, purpose).listed.iter().map(|l| l.list.name()).collect();
+    names.dedup();
+    let value = if names.is_empty() { "in no list held; check the current law".to_owned() } else { names.join(", ") };
+    Some(Fact { what: "residues listed".to_owned(), value, source: "the entries below".to_owned() })
+}
+
+/// What the lists say of residues for this purpose.
+fn residue_facts(id: &str, purpose: Purpose) -> Vec<Fact> {
+    let said = limits_for(id, purpose);
+    let fact = |value: String, source: String| Fact { what: "residues".to_owned(), value, source };
+    let listed = said.listed.iter().map(|l| fact(l.sentence(), cite(&l.source)));
+    listed.chain(said.not_listed.iter().map(|words| fact(words.clone(), String::new()))).collect()
+}
+
 /// How target and company part, as facts of the solvent.
 fn parting_facts(r: &SolventRank, target: &str) -> Vec<Fact> {
     let fact = |what: String, value: String, source: &str| {
@@ -170,7 +206,9 @@ fn parting_facts(r: &SolventRank, target: &str) -> Vec<Fact> {
 pub fn beside(a: &SolventRow, b: &SolventRow) -> (Vec<String>, Vec<Vec<String>>) {
     let mut rows: Vec<Vec<String>> = Vec::new();
     let of = |row: &SolventRow, what: &str| {
-        row.facts.iter().chain(&row.limits).find(|f| f.what == what).map_or_else(|| "–".to_owned(), |f| f.value.clone())
+        let all = row.facts.iter().chain(&row.limits).filter(|f| f.what == what).map(|f| f.value.as_str());
+        let all = all.collect::<Vec<_>>().join(" ");
+        if all.is_empty() { "–".to_owned() } else { all }
     };
     for what in a.facts.iter().chain(&a.limits).chain(&b.facts).chain(&b.limits).map(|f| &f.what) {
         if !rows.iter().any(|r| &r[0] == what) {
@@ -193,8 +231,8 @@ mod tests {
     use unstir_core::judgement::rank::rank;
 
     fn shown(wish: &Wish) -> Vec<SolventRow> {
-        let g = good(0);
-        arrange(&rank(&g.study).unwrap(), Some(1.21), "caffeine", wish)
+        let ranks = rank(&good(0).study).unwrap();
+        arrange(&Liquid { ranks, target: "caffeine".into(), density: Some(1.21), ..Liquid::default() }, wish)
     }
 
     #[test]
@@ -220,7 +258,8 @@ mod tests {
         assert!(none(&rows, "dichloromethane") && none(&rows, "toluene") && !none(&rows, "ethyl_acetate"));
         let rows = shown(&Wish { words: " Peroxides ".into(), ..Wish::default() });
         assert!(!none(&rows, "diethyl_ether") && rows.len() < solvents().len());
-        let near = arrange(&[], Some(0.9), "caffeine", &Wish { parts: true, ..Wish::default() });
+        let near = Liquid { density: Some(0.9), ..Liquid::default() };
+        let near = arrange(&near, &Wish { parts: true, ..Wish::default() });
         assert!(none(&near, "ethyl_acetate") && !none(&near, "dichloromethane"));
     }
 
