@@ -9,6 +9,7 @@ use crate::view_model::ranking::{Liquid, ORDERS, Wish, arrange, beside};
 use crate::view_model::solvent::{Fact, SolventRow};
 use leptos::prelude::*;
 use unstir_core::judgement::rank::rank;
+use unstir_core::library::solvents::solvents;
 use unstir_core::process::concentrate::density_g_per_ml;
 
 /// Longest value that stands in the list of facts; longer ones get a line of their own.
@@ -26,14 +27,17 @@ pub fn Ranking() -> impl IntoView {
         // To two decimals, so that the list is not built anew at each keystroke.
         density: g.plan.liquor.brix.map(|b| (density_g_per_ml(b) * 100.0).round() / 100.0),
     });
-    let all = Memo::new(move |_| liquid.with(|l| arrange(l, &Wish::default())));
     let rows = Memo::new(move |_| liquid.with(|l| wish.with(|wish| arrange(l, wish))));
     let pair = Memo::new(move |_| {
         picked.with(|p| {
-            let row = |i: usize| all.with(|all| all.iter().find(|r| p.get(i) == Some(&r.id)).cloned());
-            row(0).zip(row(1)).map(|(a, b)| beside(&a, &b)).unwrap_or_default()
+            let [a, b] = p.as_slice() else { return Default::default() };
+            // A picked solvent is compared also where the wish leaves it out.
+            let all = liquid.with(|l| arrange(l, &Wish::default()));
+            let row = |id: &String| all.iter().find(|r| r.id == *id);
+            row(a).zip(row(b)).map(|(a, b)| beside(a, b)).unwrap_or_default()
         })
     });
+    let held = solvents().len();
     let order = ChoiceField(crate::parts::ChoiceFieldProps {
         label: "in order of".to_owned(),
         path: Signal::stored("ranking.order".to_owned()),
@@ -71,8 +75,8 @@ pub fn Ranking() -> impl IntoView {
             </div>
             <p class="quiet">
                 {live(move || {
-                    let (shown, of) = (rows.with(Vec::len), all.with(Vec::len));
-                    format!("{shown} of {of} shown. A K that is not known is not taken to be 0: measure it with one portion of a 10 mL sample.")
+                    let shown = rows.with(Vec::len);
+                    format!("{shown} of {held} shown. A K that is not known is not taken to be 0: measure it with one portion of a 10 mL sample.")
                 })}
             </p>
             <Results there=Signal::derive(move || pair.with(|p| !p.0.is_empty()))>
