@@ -11,6 +11,7 @@ use crate::process::acidity::{self, Acidity};
 use crate::process::concentrate::{self, Liquor};
 use crate::process::make_up::{self, LossRow, MadeUp, MakeUpPlan};
 use crate::process::portions::{self, PortionIn, StageRow, StagesIn, StagesOut, removed, solve_rising};
+use crate::process::settle::{PARTS_G_PER_ML, settling};
 use crate::process::strip_plan::{self, StripPlan};
 use crate::process::{counter_current, isolate};
 use crate::solution::dose::{self, Buffer, Dose};
@@ -436,24 +437,29 @@ impl Chain {
         {
             say("extraction", "Solvent left behind and liquor carried out are counted for portions only; this scheme is planned with clean parting.".to_owned());
         }
-        if let Some(b) = self.liquor.brix.filter(|b| *b > 50.0) {
-            say(
-                "concentrate.to",
-                format!(
-                    "At {b:.0} °Brix the liquor is dense and viscous: layers settle slowly and emulsions hold. Leaving more water in costs solvent and saves waiting."
-                ),
-            );
-        }
-        if let Some(q) = &study.solvent.density_g_per_ml {
-            let liquor = concentrate::density_g_per_ml(self.liquor.brix.unwrap_or(0.0));
-            let gap = q.value - liquor;
-            if gap.abs() < 0.05 {
+        // Where nothing is known of the soluble solids the liquor counts as water.
+        if let Some(s) = settling(study, Some(self.liquor.brix.unwrap_or(0.0))) {
+            let gap = s.density_difference_g_per_ml.abs();
+            if gap < PARTS_G_PER_ML {
                 say(
                     "solvent",
                     format!(
-                        "The layers differ by only {:.3} g/mL (liquor {liquor:.3}, solvent {:.3}): they may not part, or may change places.",
-                        gap.abs(),
-                        q.value
+                        "The layers differ by only {gap:.3} g/mL (liquor {:.3}): they may not part, or may change places.",
+                        s.liquor_density_g_per_ml
+                    ),
+                );
+            } else if s.changed_places {
+                say(
+                    "solvent",
+                    "In this liquor the layers lie the other way round than in plain water: mark them before you drain."
+                        .to_owned(),
+                );
+            }
+            if let Some(times) = s.times_slower.filter(|t| *t > 10.0) {
+                say(
+                    "concentrate.to",
+                    format!(
+                        "Drops settle about {times:.0} times slower in this liquor than in plain water, and emulsions hold. Leaving more water in costs solvent and saves waiting."
                     ),
                 );
             }

@@ -15,6 +15,7 @@ use crate::process::concentrate::Liquor;
 use crate::process::isolate::{self, IsolateResult};
 use crate::process::make_up::MakeUpPlan;
 use crate::process::portions::StageRow;
+use crate::process::settle::{Settling, settling};
 use crate::process::strip_plan::StripPlan;
 use crate::solution::dose::Dose;
 use crate::solution::ionisation::{Constant, constants_in_use, constants_of, speciate};
@@ -221,6 +222,10 @@ pub struct Plan {
     pub isolate: Option<IsolateResult>,
     /// Bringing the raffinate to strength.
     pub make_up: MakeUpPlan,
+    /// Layers and settling; none while the density of the solvent or the soluble solids are not
+    /// known.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub settling: Option<Settling>,
     /// Air of the room after a spill; none for a solvent that the library does not hold.
     #[serde(skip_serializing_if = "Option::is_none")]
     pub spill: Option<SpillPlan>,
@@ -325,6 +330,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         levels: chain.levels(study),
         inverse,
         isolate,
+        settling: settling(study, chain.liquor.brix),
         spill: spill(study, headline.solvent_total_ml.value),
         strip: chain.strip(study),
         make_up: chain.make_up(study),

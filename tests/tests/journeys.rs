@@ -56,6 +56,9 @@ fn the_demo_of_a_neutral_alkaloid_shows_plan_and_isolate_side_by_side() {
         }
         let made = page.text("#make-up").await?;
         assert!(made.contains("480"), "{made}");
+        // 11.6 mPa·s and 1.214 g/mL: (11.56/1.002)·(0.3284/0.1122) = 33.8.
+        let feed = page.text("#feed").await?;
+        assert!(feed.contains("34 times as slowly"), "{feed}");
         let readings = page.text("#ionisation").await?;
         assert!(readings.contains("The disagreement matters"), "{readings}");
         Ok(())

@@ -2,9 +2,10 @@
 
 use super::bind::{choice, fixed_number, hinted, number, of_draft, of_plan, words};
 use super::step::Results;
-use crate::parts::{Working, live};
+use crate::parts::{DataTable, Working, live, live_view};
 use crate::state::draft::ConcentrateBy;
 use crate::view_model::feed::{liquor_line, liquor_working};
+use crate::view_model::settle::{settling_sentences, settling_working, trade_head, trade_rows};
 use leptos::prelude::*;
 
 const WAYS: &[(ConcentrateBy, &str)] = &[
@@ -60,10 +61,36 @@ pub fn ConcentrateFields() -> impl IntoView {
                 <Working
                     title="the liquor"
                     lines=of_plan(|g| liquor_working(&g.study, &g.plan.liquor))
-                    reference="mass balance; densities of sucrose solutions, National Bureau of Standards Circular 440 (1942)"
-                    validity="0–70 °Bx at 20 °C, all soluble solids counted as sucrose, nothing but water leaves"
+                    reference="mass balance; densities of sucrose solutions, ICUMSA SPS-4, H. Bettin et al. (1998)"
+                    validity="0–75 °Bx at 20 °C, all soluble solids counted as sucrose, nothing but water leaves"
                 />
             </Results>
+            <Settling/>
         </div>
+    }
+}
+
+/// What concentrating does to settling.
+#[component]
+fn Settling() -> impl IntoView {
+    let sentences = of_plan(|g| settling_sentences(&g.study, &g.plan));
+    view! {
+        <Results there=Signal::derive(move || sentences.with(|s| !s.is_empty()))>
+            <h3>"Settling in this liquor"</h3>
+            <ul class="words">
+                {live_view(move || sentences.get().into_iter().map(|s| view! { <li>{s}</li> }).collect_view())}
+            </ul>
+            <DataTable
+                caption=Signal::stored("What concentrating saves and costs".to_owned())
+                head=Signal::stored(trade_head())
+                rows=of_plan(|g| trade_rows(&g.plan))
+            />
+            <Working
+                title="settling"
+                lines=of_plan(|g| settling_working(&g.study, &g.plan))
+                reference="G. G. Stokes (1851); viscosity J. Génotelle and the tables of J. F. Swindells (1958); density ICUMSA SPS-4 (1998)"
+                validity="small rigid drops, the same drop in both; soluble solids as sucrose, 0–75 °Bx; says nothing of emulsions held by surface-active ingredients"
+            />
+        </Results>
     }
 }

@@ -10,6 +10,7 @@ pub mod isolate;
 pub mod make_up;
 pub mod portions;
 pub mod ranking;
+pub mod settle;
 pub mod solvent;
 pub mod strip;
 #[cfg(test)]

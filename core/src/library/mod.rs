@@ -13,6 +13,7 @@
 //! | solutes, their sites, and printed readings of their constants | [`solutes`] | `solutes.csv`, `pka_readings.csv` |
 //! | coefficients and descriptors of the free-energy estimate of K | [`free_energy`] | `free_energy_systems.csv`, `descriptors.csv` |
 //! | Debye–Hückel constant against temperature | [`activity`] | `activity_constants.csv` |
+//! | sucrose solutions at 20 °C | [`sucrose`] | `sucrose.csv` |
 //! | what a source is and how far it was checked | [`sources`] | `sources.csv` |
 //!
 //! **Invariant:** a number is never here without a [`sources::Source`] that says whether it was
@@ -28,4 +29,5 @@ pub mod residual;
 pub mod solutes;
 pub mod solvents;
 pub mod sources;
+pub mod sucrose;
 mod table;

@@ -107,7 +107,7 @@ mod tests {
     use super::*;
 
     /// Every table that names sources.
-    const TABLES: [&str; 11] = [
+    const TABLES: [&str; 12] = [
         include_str!("../../data/solvents.csv"),
         include_str!("../../data/exposure_limits.csv"),
         include_str!("../../data/residual_limits.csv"),
@@ -119,6 +119,7 @@ mod tests {
         include_str!("../../data/activity_constants.csv"),
         include_str!("../../data/free_energy_systems.csv"),
         include_str!("../../data/descriptors.csv"),
+        include_str!("../../data/sucrose.csv"),
     ];
 
     /// The whole library travels in the one-file page, whose size is bounded.

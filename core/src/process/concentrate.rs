@@ -1,5 +1,6 @@
 //! Taking water off: a mass balance on solids and water.
 
+use crate::solution::sugar;
 use crate::study::{ConcentrateTo, Problem, Study};
 use serde::Serialize;
 
@@ -21,28 +22,23 @@ pub struct Liquor {
     pub brix: Option<f64>,
 }
 
-/// Apparent specific volume of dissolved sucrose [mL/g] at mass fraction `w` [-], 20 °C.
+/// Density of a sugar solution at 20 °C [g/mL] from `brix` [°Brix]; other soluble solids count as
+/// sucrose, as a refractometer counts them.
 ///
-/// `v = 0.61626 + 0.007035 w + 0.020274 w²`, fitted to the densities of sucrose solutions.
-/// Valid: 0 ≤ w ≤ 0.75; the density from it is within 0.0001 g/mL of the table.
-/// Reference: Plato's table, National Bureau of Standards Circular 440 (1942), as carried in
-/// handbooks.
-fn apparent_specific_volume(w: f64) -> f64 {
-    C0 + w * (C1 + w * C2)
-}
-const C0: f64 = 0.616_260;
-const C1: f64 = 0.007_035;
-const C2: f64 = 0.020_274;
-
-/// Density of a sugar solution at 20 °C [g/mL] from `brix` [°Brix].
-///
-/// `1/ρ = (1 − w)/ρ_water + w·v(w)`, `w = °Brix/100`, `v` the apparent specific volume of sucrose.
-/// Valid: 0–70 °Brix; other soluble solids count as sucrose, as a refractometer counts them.
-/// Reference: National Bureau of Standards Circular 440 (1942).
+/// See [`sugar::density_g_per_ml`].
 pub fn density_g_per_ml(brix: f64) -> f64 {
-    let w = brix / 100.0;
-    1.0 / ((1.0 - w) / WATER_DENSITY_20C + w * apparent_specific_volume(w))
+    sugar::density_g_per_ml(brix, 20.0)
 }
+
+/// Apparent specific volume of dissolved sucrose [mL/g] at mass fraction `w` [-], 20 °C: what a gram
+/// adds to the volume of its water.
+///
+/// `v = (1/ρ − (1 − w)/ρ_water)/w`, from the density; that of a thin solution towards `w` 0.
+fn apparent_specific_volume(w: f64) -> f64 {
+    let w = w.max(THIN);
+    (1.0 / density_g_per_ml(100.0 * w) - (1.0 - w) / WATER_DENSITY_20C) / w
+}
+const THIN: f64 = 1e-4;
 
 /// The liquor of `study` after its water has been taken off `feed_ml` [mL] of feed (the feed less
 /// what was lost of it before).

@@ -8,6 +8,7 @@ pub mod henry;
 pub mod isolate;
 pub mod make_up;
 pub mod portions;
+pub mod settle;
 pub mod strip;
 pub mod strip_fit;
 pub mod strip_plan;

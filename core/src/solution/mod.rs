@@ -9,4 +9,5 @@ pub mod concentrated;
 pub mod dose;
 pub mod ionisation;
 mod solver;
+pub mod sugar;
 pub mod water;
