@@ -8,6 +8,7 @@ use crate::outcome::Notice;
 use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::plan::{IngredientRow, Inverse, Level, StateShare};
 use crate::process::acidity::{self, Acidity};
+use crate::process::carbonate::{self, Recarbonation};
 use crate::process::concentrate::{self, Liquor};
 use crate::process::make_up::{self, LossRow, MadeUp, MakeUpPlan};
 use crate::process::portions::{self, PortionIn, StageRow, StagesIn, StagesOut, removed, solve_rising};
@@ -318,6 +319,12 @@ impl Chain {
             })
             .collect();
         dose::dose(self.charged_ml, &buffers, self.ph, to, study.feed.temperature_c.value)
+    }
+
+    /// Giving back carbon dioxide.
+    pub fn recarbonation(&self, study: &Study) -> Option<Recarbonation> {
+        let made_up = study.make_up.made_up_to_ml.as_ref().map_or(self.make_up_ml, |q| q.value);
+        carbonate::recarbonation(study, made_up)
     }
 
     /// Stripping the raffinate.

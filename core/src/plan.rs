@@ -11,6 +11,7 @@ use crate::order::put_in_order;
 use crate::outcome::{Notice, Outcome};
 use crate::partition::distribution::{distribution_ratio, partition_at};
 use crate::process::acidity::Acidity;
+use crate::process::carbonate::Recarbonation;
 use crate::process::concentrate::Liquor;
 use crate::process::isolate::{self, IsolateResult};
 use crate::process::make_up::MakeUpPlan;
@@ -222,6 +223,9 @@ pub struct Plan {
     pub isolate: Option<IsolateResult>,
     /// Bringing the raffinate to strength.
     pub make_up: MakeUpPlan,
+    /// Carbon dioxide to give back; none if the feed states none.
+    #[serde(skip_serializing_if = "Option::is_none")]
+    pub recarbonation: Option<Recarbonation>,
     /// Layers and settling; none while the density of the solvent or the soluble solids are not
     /// known.
     #[serde(skip_serializing_if = "Option::is_none")]
@@ -330,6 +334,7 @@ pub fn plan(study: &Study) -> Result<Outcome<Plan>, Vec<Problem>> {
         levels: chain.levels(study),
         inverse,
         isolate,
+        recarbonation: chain.recarbonation(study),
         settling: settling(study, chain.liquor.brix),
         spill: spill(study, headline.solvent_total_ml.value),
         strip: chain.strip(study),

@@ -136,6 +136,10 @@ fn a_missing_ph_is_worked_out_from_what_is_listed() {
         // As monosodium citrate: pH about half the sum of the first two pKa, 3.9.
         let sum = page.text("#feed .step-sum").await?;
         assert!(sum.contains("pH 3.8") || sum.contains("pH 3.9"), "{sum}");
+        // Twice what one atmosphere dissolves at 5 °C, so about one bar of gauge pressure.
+        page.paste_at("feed.co2_g_per_l", "5.63").await?;
+        let made = page.text("#make-up").await?;
+        assert!(made.contains("2.7 g for the made-up liquid") && made.contains("under 1.0 bar"), "{made}");
         page.paste_at("feed.strong_ions[0].charge", "0.5").await?;
         let problem = page.problem("feed.strong_ions[0].charge").await?;
         assert!(problem.contains("whole number"), "{problem}");

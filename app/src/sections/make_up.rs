@@ -7,7 +7,9 @@ use crate::state::Draft;
 use crate::state::draft::{LossAs, LossDraft, RowId};
 use crate::state::work::work;
 use crate::view_model::format::measured;
-use crate::view_model::make_up::{ledger_head, ledger_rows, strength_head, strength_rows, volume_working};
+use crate::view_model::make_up::{
+    carbonate_sentences, ledger_head, ledger_rows, strength_head, strength_rows, volume_working,
+};
 use crate::view_model::solvent::cautions_at;
 use leptos::prelude::*;
 use unstir_core::library::cautions::CautionStep;
@@ -25,6 +27,7 @@ const AMOUNTS: &[(LossAs, &str)] =
 #[component]
 pub fn MakeUpStep() -> impl IntoView {
     let w = work();
+    let gas = of_plan(|g| carbonate_sentences(&g.plan));
     let losses = of_draft(|d| d.losses.iter().map(|l| l.id).collect::<Vec<_>>());
     let sum = of_plan(|g| format!("{} restores strength", measured(&g.plan.headline.make_up_volume_ml).line()));
     let advice = of_plan(|g| g.plan.make_up.advice.clone());
@@ -46,9 +49,18 @@ pub fn MakeUpStep() -> impl IntoView {
                     |d| &d.made_up_to,
                     |d| &mut d.made_up_to,
                 )}
+                {fixed_number(
+                    hinted("carbonated at", "°C", "5 if left empty"),
+                    "make_up.carbonate_at_c",
+                    |d| &d.carbonate_at,
+                    |d| &mut d.carbonate_at,
+                )}
             </div>
             <Results there=Signal::derive(move || advice.with(|a| !a.is_empty()))>
                 <p class="advice">{live(move || advice.get())}</p>
+                <ul class="words">
+                    {live_view(move || gas.get().into_iter().map(|s| view! { <li>{s}</li> }).collect_view())}
+                </ul>
                 <Working
                     title="the make-up volume"
                     lines=of_plan(|g| volume_working(&g.study, &g.plan))

@@ -53,6 +53,9 @@ pub struct Draft {
     pub losses: Vec<LossDraft>,
     /// Volume reached at make-up, once done.
     pub made_up_to: NumberText,
+    /// Temperature of carbonating [°C]; optional.
+    #[serde(default)]
+    pub carbonate_at: NumberText,
 }
 
 /// The liquid as received, as typed.
@@ -399,6 +402,7 @@ impl Draft {
             strip: StripDraft::default(),
             losses: Vec::new(),
             made_up_to: NumberText::default(),
+            carbonate_at: NumberText::default(),
         }
     }
 

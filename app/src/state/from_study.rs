@@ -198,6 +198,7 @@ impl Draft {
             self.losses.push(LossDraft { id, what: l.what.clone(), at: l.at, amount_as, amount });
         }
         self.made_up_to = NumberText::from_optional(study.make_up.made_up_to_ml.as_ref());
+        self.carbonate_at = NumberText::from_optional(study.make_up.carbonate_at_c.as_ref());
     }
 }
 
@@ -235,6 +236,7 @@ mod tests {
         study.partition[0].transfer_enthalpy_kj_per_mol = Some((-5.0).into());
         study.partition[0].k_temperature_c = 30.0;
         study.make_up.made_up_to_ml = Some(500.0.into());
+        study.make_up.carbonate_at_c = Some(4.0.into());
         study.concentrate.ph_after = Some(3.3.into());
         study.feed.co2_g_per_l = Some(5.0.into());
         study.goal.purpose = Purpose::Medicine;

@@ -108,7 +108,10 @@ impl Draft {
             },
             strip: read_strip(&self.strip, &mut r),
             losses: self.losses.iter().enumerate().map(|(i, l)| read_loss(l, i, &mut r)).collect(),
-            make_up: MakeUp { made_up_to_ml: r.optional(&self.made_up_to, "make_up.made_up_to_ml", "made-up volume") },
+            make_up: MakeUp {
+                made_up_to_ml: r.optional(&self.made_up_to, "make_up.made_up_to_ml", "made-up volume"),
+                carbonate_at_c: r.optional(&self.carbonate_at, "make_up.carbonate_at_c", "temperature of carbonating"),
+            },
         };
         (study, r.problems)
     }

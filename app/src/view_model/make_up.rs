@@ -4,6 +4,26 @@ use super::format::{fixed, percent, significant, stated};
 use unstir_core::plan::Plan;
 use unstir_core::study::Study;
 
+/// What giving back the carbon dioxide takes, in sentences; none if the feed states none.
+pub fn carbonate_sentences(plan: &Plan) -> Vec<String> {
+    let Some(r) = &plan.recarbonation else { return Vec::new() };
+    let bar = |kpa: f64| fixed(kpa / 100.0, 1);
+    vec![
+        format!(
+            "Carbon dioxide: {} g/L, {} volumes, as the feed had; {} g for the made-up liquid, if all of it left with the water.",
+            significant(r.g_per_l, 2),
+            significant(r.volumes, 2),
+            significant(r.co2_g, 2)
+        ),
+        format!(
+            "It stays dissolved at {} °C under {} bar of gauge pressure, carbon dioxide only; warmed to 25 °C a full vessel holds {} bar. Vessel, closure and regulator must be rated for more than that.",
+            r.temperature_c,
+            bar(r.gauge_kpa),
+            bar(r.gauge_at_25c_kpa)
+        ),
+    ]
+}
+
 /// Head of the ledger.
 pub fn ledger_head() -> Vec<String> {
     ["loss", "from", "mL", "of what was there", "as feed mL"].map(str::to_owned).to_vec()

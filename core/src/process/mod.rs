@@ -1,6 +1,7 @@
 //! One file per step of the flow, and what the steps share.
 
 pub mod acidity;
+pub mod carbonate;
 pub mod concentrate;
 pub mod counter_current;
 pub mod extract_workup;

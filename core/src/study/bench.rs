@@ -65,4 +65,7 @@ pub struct MakeUp {
     /// Volume to which the liquid was in fact brought [mL], once done.
     #[serde(default, skip_serializing_if = "Option::is_none")]
     pub made_up_to_ml: Option<Quantity>,
+    /// Temperature at which carbon dioxide is given back [°C].
+    #[serde(default, skip_serializing_if = "Option::is_none")]
+    pub carbonate_at_c: Option<Quantity>,
 }

@@ -98,6 +98,7 @@ fn allowed(path: &str) -> Allowed {
         }
         "limit_mg_per_l" => a("the residue to reach", "mg/L", 0.0, false, 1e6, "check the unit"),
         "serving_ml" => a("the serving", "mL", 0.0, false, 1e5, "give the volume on the label"),
+        "carbonate_at_c" => a("the temperature of carbonating", "°C", 0.0, true, 40.0, "carbonate cold"),
         "made_up_to_ml" => a("the made-up volume", "mL", 0.0, false, 1e6, "leave it empty until it is done"),
         "ph" | "ph_after" => a("pH", "", -2.0, true, 16.0, "check the reading"),
         "temperature_c" => a("the temperature", "°C", 0.0, true, 100.0, "the liquid has to be liquid water"),

@@ -97,4 +97,5 @@ pub fn for_each_quantity(study: &mut Study, f: &mut dyn FnMut(&str, &mut Quantit
         }
     }
     maybe("make_up.made_up_to_ml", &mut study.make_up.made_up_to_ml, f);
+    maybe("make_up.carbonate_at_c", &mut study.make_up.carbonate_at_c, f);
 }
