@@ -15,7 +15,7 @@ fn hash(bytes: &[u8], seed: u64) -> u64 {
 
 const SEED: u64 = 0xcbf2_9ce4_8422_2325;
 /// Changes whenever a result changes in any digit; then say so in CHANGELOG.
-const GOLDEN: u64 = 0x1189_9e2f_d53f_e2de;
+const GOLDEN: u64 = 0xf8cc_6727_8546_fcd4;
 
 #[test]
 fn the_same_digits_everywhere() {

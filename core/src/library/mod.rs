@@ -12,6 +12,7 @@
 //! | published partition coefficients | [`partition`] | `partition.csv` |
 //! | solutes, their sites, and printed readings of their constants | [`solutes`] | `solutes.csv`, `pka_readings.csv` |
 //! | coefficients and descriptors of the free-energy estimate of K | [`free_energy`] | `free_energy_systems.csv`, `descriptors.csv` |
+//! | Henry constants of solutes, estimates left out | [`henry`] | `henry.csv` |
 //! | Debye–Hückel constant against temperature | [`activity`] | `activity_constants.csv` |
 //! | sucrose solutions at 20 °C | [`sucrose`] | `sucrose.csv` |
 //! | what a source is and how far it was checked | [`sources`] | `sources.csv` |
@@ -23,6 +24,7 @@
 pub mod activity;
 pub mod cautions;
 pub mod free_energy;
+pub mod henry;
 pub mod limits;
 pub mod partition;
 pub mod residual;

@@ -107,7 +107,7 @@ mod tests {
     use super::*;
 
     /// Every table that names sources.
-    const TABLES: [&str; 12] = [
+    const TABLES: [&str; 13] = [
         include_str!("../../data/solvents.csv"),
         include_str!("../../data/exposure_limits.csv"),
         include_str!("../../data/residual_limits.csv"),
@@ -120,6 +120,7 @@ mod tests {
         include_str!("../../data/free_energy_systems.csv"),
         include_str!("../../data/descriptors.csv"),
         include_str!("../../data/sucrose.csv"),
+        include_str!("../../data/henry.csv"),
     ];
 
     /// The whole library travels in the one-file page, whose size is bounded.

@@ -1,11 +1,13 @@
 //! Taking water off: a mass balance on solids and water.
 
-use crate::solution::sugar;
+use crate::solution::{sugar, water};
 use crate::study::{ConcentrateTo, Problem, Study};
 use serde::Serialize;
 
-/// Density of water at 20 °C [g/mL]; G. S. Kell, J. Chem. Eng. Data 20 (1975) 97.
-pub const WATER_DENSITY_20C: f64 = 0.998_203;
+/// Temperature volumes are stated at [°C], as volumetric glass is marked.
+const VOLUMETRIC_C: f64 = 20.0;
+/// Density of water at 20 °C [g/mL]: the same as that of a liquor of 0 °Brix, to the bit.
+pub const WATER_DENSITY_20C: f64 = water::density_g_per_ml(VOLUMETRIC_C);
 
 /// The liquor after concentrating.
 #[derive(Clone, Debug, PartialEq, Serialize)]
@@ -27,18 +29,8 @@ pub struct Liquor {
 ///
 /// See [`sugar::density_g_per_ml`].
 pub fn density_g_per_ml(brix: f64) -> f64 {
-    sugar::density_g_per_ml(brix, 20.0)
+    sugar::density_g_per_ml(brix, VOLUMETRIC_C)
 }
-
-/// Apparent specific volume of dissolved sucrose [mL/g] at mass fraction `w` [-], 20 °C: what a gram
-/// adds to the volume of its water.
-///
-/// `v = (1/ρ − (1 − w)/ρ_water)/w`, from the density; that of a thin solution towards `w` 0.
-fn apparent_specific_volume(w: f64) -> f64 {
-    let w = w.max(THIN);
-    (1.0 / density_g_per_ml(100.0 * w) - (1.0 - w) / WATER_DENSITY_20C) / w
-}
-const THIN: f64 = 1e-4;
 
 /// The liquor of `study` after its water has been taken off `feed_ml` [mL] of feed (the feed less
 /// what was lost of it before).
@@ -62,8 +54,10 @@ pub fn liquor(study: &Study, feed_ml: f64) -> Result<Liquor, Problem> {
         ConcentrateTo::Unchanged => (v0, m0, "concentrate.to"),
         ConcentrateTo::VolumeMl(v) => {
             let at = "concentrate.to.volume_ml";
-            let least = solids * density_floor();
-            if v.value <= least {
+            // °Brix that holds the solids in that volume; 0 where there are none.
+            let grams_per_l = if solids > 0.0 { 1000.0 * solids / v.value } else { 0.0 };
+            let Some(b1) = sugar::brix_from_sucrose_g_per_l(grams_per_l, VOLUMETRIC_C).filter(|_| v.value > 0.0) else {
+                let least = solids / density_g_per_ml(100.0);
                 return Err(Problem::new(
                     at,
                     format!(
@@ -71,7 +65,7 @@ pub fn liquor(study: &Study, feed_ml: f64) -> Result<Liquor, Problem> {
                         v.value
                     ),
                 ));
-            }
+            };
             if v.value > v0 {
                 return Err(Problem::new(
                     at,
@@ -81,7 +75,7 @@ pub fn liquor(study: &Study, feed_ml: f64) -> Result<Liquor, Problem> {
                     ),
                 ));
             }
-            (v.value, mass_at_volume(v.value, solids), at)
+            (v.value, v.value * density_g_per_ml(if solids > 0.0 { b1 } else { 0.0 }), at)
         }
         ConcentrateTo::WaterRemovedG(w) => {
             let at = "concentrate.to.water_removed_g";
@@ -117,22 +111,4 @@ pub fn liquor(study: &Study, feed_ml: f64) -> Result<Liquor, Problem> {
         feed_brix: b0,
         brix: b0.map(|_| brix1),
     })
-}
-
-/// Least volume a gram of solids can fill [mL/g]: its own apparent volume at 100 °Brix.
-fn density_floor() -> f64 {
-    apparent_specific_volume(1.0)
-}
-
-/// Mass [g] of a liquor of `volume_ml` [mL] that holds `solids` [g].
-///
-/// `V = (m − s)/ρ_water + s·v(s/m)`, solved by fixed-point iteration: `v` changes by under 3 %
-/// over its range, so each turn gains more than a digit.
-fn mass_at_volume(volume_ml: f64, solids: f64) -> f64 {
-    let mut m = volume_ml;
-    for _ in 0..60 {
-        let w = if m > 0.0 { (solids / m).min(1.0) } else { 1.0 };
-        m = solids + WATER_DENSITY_20C * (volume_ml - solids * apparent_specific_volume(w));
-    }
-    m
 }
